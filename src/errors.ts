@@ -11,7 +11,12 @@ export interface Position {
 function placed(position: Position | null, what: string): string {
   if (position === null) return what;
   const { file, line, column } = position;
-  const place = line === undefined ? file : column === undefined ? `${file}:${line}` : `${file}:${line}:${column}`;
+  const place =
+    line === undefined
+      ? file
+      : column === undefined
+        ? `${file}:${line}`
+        : `${file}:${line}:${column}`;
   return `${place}: ${what}`;
 }
 
@@ -38,7 +43,13 @@ export class LimitError extends Error {
   readonly remedy: string;
   readonly done: string;
 
-  constructor(what: string, estimate: string, bound: string, remedy: string, done = 'nothing was written') {
+  constructor(
+    what: string,
+    estimate: string,
+    bound: string,
+    remedy: string,
+    done = 'nothing was written',
+  ) {
     super(`${what}: needs about ${estimate}, the limit is ${bound}; ${remedy}; ${done}`);
     this.estimate = estimate;
     this.bound = bound;

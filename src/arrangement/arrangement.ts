@@ -6,9 +6,10 @@
 // span(N) cut with Z^d (the first r rows of the inverse of U), and the first r columns of U lift a
 // point y of the essential space back to x = U y with N x = L y. When the normals span R^d no
 // change is made. Over Q(sqrt(k)) a set of pivot columns serves instead.
-import type { GeneratorList } from '../input/generators.js';
+
 import type { ExactNumber } from '../exact/number.js';
 import type { Ring } from '../exact/ring.js';
+import type { GeneratorList } from '../input/generators.js';
 
 /** One hyperplane: a class of parallel and opposite normals. */
 export interface Hyperplane<E> {

@@ -36,9 +36,11 @@ export function quadraticRing(k: bigint): Ring<Quadratic> {
     const b = negative ? -x.b : x.b;
     // |a + b sqrt(k)| >= 1 / (|a| + |b| sqrt(k)), since the norm is a non-zero integer; so this many
     // extra bits leave at least 64 significant ones.
-    const size = BigInt((magnitude(a) + magnitude(b) * (integerSquareRoot(k) + 1n)).toString(2).length);
+    const size = BigInt(
+      (magnitude(a) + magnitude(b) * (integerSquareRoot(k) + 1n)).toString(2).length,
+    );
     const shift = size + 64n;
-    const root = integerSquareRoot(b * b * k << (2n * shift));
+    const root = integerSquareRoot((b * b * k) << (2n * shift));
     return { value: (a << shift) + (b < 0n ? -root : root), shift };
   };
   const format = (x: Quadratic): string => {
