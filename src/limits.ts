@@ -12,3 +12,6 @@ export const squareFreeTrialDivisor = 1_000_000;
 
 /** Entries (normals times coordinates) that a made family may have. */
 export const familyEntries = 1_000_000;
+
+/** Nodes and edges together of a graph written as GEXF, which graphology holds as objects. */
+export const gexfElements = 1_000_000;
