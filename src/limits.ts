@@ -15,3 +15,27 @@ export const familyEntries = 1_000_000;
 
 /** Nodes and edges together of a graph written as GEXF, which graphology holds as objects. */
 export const gexfElements = 1_000_000;
+
+/** Seconds a route may take by estimate before the census leaves it out (`--budget`). */
+export const defaultRouteSeconds = 60;
+
+/** Seconds the cheapest route to the polynomial may take by estimate when the others are too dear. */
+export const polynomialPatienceSeconds = 3600;
+
+/** Bytes of tables a command may allocate by estimate (`--memory`). */
+export const defaultMemoryBytes = 2 * 1024 ** 3;
+
+/** Regions times hyperplanes times coordinates up to which the census looks at each region alone. */
+export const regionCheckEntries = 3_000_000;
+
+/** Columns of the terminal page. */
+export const pageColumns = 80;
+
+/** Regions a second that estimates count on; listing is seldom slower. */
+export const regionsListedPerSecond = 1_500_000;
+
+/** Faces a second that estimates count on. */
+export const facesListedPerSecond = 2_500_000;
+
+/** Bytes for each Int32 word of a listed row, with the room tables leave to grow. */
+export const bytesPerListedWord = 11;
