@@ -89,12 +89,21 @@ export class ListBuilder {
     return {
       title,
       coordinates,
-      radicand: this.#radicand,
+      radicand: this.#hasRoot() ? this.#radicand : null,
       normals: this.#normals,
       labels: this.#labels.some((label) => label !== null) ? this.#labels : null,
       ranges: this.#ranges.some((range) => !isUnit(range)) ? this.#ranges : null,
       source: { name: source.name, sha256: source.sha256 },
     };
+  }
+
+  /** Roots can cancel, where rows are computed from what was read. */
+  #hasRoot(): boolean {
+    const has = (x: ExactNumber) => x.b !== 0n;
+    return (
+      this.#normals.some((entries) => entries.some(has)) ||
+      this.#ranges.some(({ low, high }) => has(low) || has(high))
+    );
   }
 
   #join(parsed: ParsedNumber, place: Place): void {
