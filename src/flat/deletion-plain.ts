@@ -63,6 +63,7 @@ export class PlainDeletion {
   private readonly stamps: Int32Array;
   private stamp = 0;
   private handed = 0;
+  private closed = 0;
   private readonly keys: Float64Array;
   private readonly numerators: Float64Array;
   private readonly denominators: Float64Array;
@@ -107,7 +108,7 @@ export class PlainDeletion {
       return;
     }
     // Where most of what is begun has to be handed over, do it early.
-    if (depth > 0 && this.handed > 256 && 2 * this.handed > this.tally.bases) {
+    if (depth > 0 && this.handed > 256 && this.handed > this.closed) {
       this.handOver(this.path, depth, this.origin[depth], n);
       return;
     }
@@ -322,6 +323,7 @@ export class PlainDeletion {
       }
       w2 += k;
     }
+    this.closed++;
     this.tally.close(n, w2);
     return true;
   }
