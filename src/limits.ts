@@ -25,6 +25,9 @@ export const polynomialPatienceSeconds = 3600;
 /** Bytes of tables a command may allocate by estimate (`--memory`). */
 export const defaultMemoryBytes = 2 * 1024 ** 3;
 
+/** Seconds by estimate in which the polynomial is had besides a listing, as a check of it. */
+export const quickPolynomialSeconds = 5;
+
 /** Regions times hyperplanes times coordinates up to which the census looks at each region alone. */
 export const regionCheckEntries = 3_000_000;
 

@@ -2,6 +2,7 @@
 // strings; what cannot be had is null, with the reason in `notes`. Exporters, pages and audits read
 // the record, never the kernels.
 import { z } from 'zod';
+import type published from './record.schema.json';
 
 const integer = z.string().regex(/^-?\d+$/);
 const natural = z.string().regex(/^\d+$/);
@@ -94,11 +95,11 @@ export type CensusRecord = z.infer<typeof recordSchema>;
 export type Check = z.infer<typeof check>;
 export type NotRun = CensusRecord['run']['notRun'][number];
 
-/** The record as JSON Schema (draft 2020-12). */
-export function recordJsonSchema(): unknown {
-  return {
-    $id: 'signwright/record/1',
-    title: 'Record of a signwright census',
-    ...z.toJSONSchema(recordSchema),
-  };
+/** The record as JSON Schema (draft 2020-12): what `record.schema.json` holds. */
+export function recordJsonSchema(): typeof published {
+  return z.toJSONSchema(recordSchema, {
+    override: ({ zodSchema, jsonSchema }) => {
+      if (zodSchema === recordSchema) jsonSchema.title = 'Record of a signwright census';
+    },
+  }) as unknown as typeof published;
 }

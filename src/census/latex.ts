@@ -1,0 +1,102 @@
+// The census as LaTeX tables for a paper: plain tabular and mathematics, no package needed.
+import { formatFactorsLatex, formatPolynomialLatex } from '../exact/polynomial.js';
+import { grouped, printable } from './layout.js';
+import type { CensusRecord } from './record.js';
+import {
+  caution,
+  countRows,
+  needsCaution,
+  plural,
+  propertyRows,
+  rootFactors,
+  titleOf,
+  total,
+} from './wording.js';
+
+const special: Record<string, string> = {
+  '\\': '\\textbackslash{}',
+  '~': '\\textasciitilde{}',
+  '^': '\\textasciicircum{}',
+  '<': '\\textless{}',
+  '>': '\\textgreater{}',
+  '|': '\\textbar{}',
+  '"': '\\textquotedbl{}',
+};
+
+/** Text of the input with everything TeX could read as a command escaped. */
+export function escapeLatex(text: string): string {
+  return printable(text).replace(/[\\~^<>|"{}$&#_%]/g, (c) => special[c] ?? `\\${c}`);
+}
+
+/** A count with groups that TeX does not take for a list: 39{,}296{,}883. */
+function number(count: string | null): string {
+  return count === null ? '--' : grouped(count, '{,}');
+}
+
+function tabular(columns: string, rows: readonly (readonly string[])[]): string[] {
+  const [head, ...body] = rows.map((row) => `  ${row.join(' & ')} \\\\`);
+  return [`\\begin{tabular}{${columns}}`, head, '  \\hline', ...body, '\\end{tabular}'];
+}
+
+/** Two tables, the counts and the checks, each in a `table` environment with its caption. */
+export function formatLatex(record: CensusRecord): string {
+  const { input, arrangement, run } = record;
+  const chi = formatPolynomialLatex(record.characteristicPolynomial.coefficients.map(BigInt));
+  const factors = rootFactors(record, formatFactorsLatex);
+  const sum = (list: readonly string[] | null): string => number(list && total(list));
+  const title = escapeLatex(titleOf(record));
+  const { linesByMultiplicity } = record.properties;
+  const answers = propertyRows(record).map(([name, text]) => `${name}: ${text.replace(/:.*/, '')}`);
+  const multiplicity =
+    linesByMultiplicity === null
+      ? ''
+      : ` Lines by multiplicity: ${Object.entries(linesByMultiplicity)
+          .map(([k, lines]) => `$t_{${k}} = ${number(lines)}$`)
+          .join(', ')}.`;
+  const lines = [
+    `% signwright ${run.version}`,
+    '\\begin{table}',
+    '\\centering',
+    ...tabular('rrrr', [
+      ['dimension', 'flats', 'faces', 'faces of the zonotope'],
+      ...countRows(record).map((row) => [
+        String(row.dimension),
+        number(row.flats),
+        number(row.faces),
+        number(row.zonotopeFaces),
+      ]),
+      ['total', sum(record.flats), sum(record.faces), sum(record.zonotope.faces)],
+    ]),
+    `\\caption{${title}: ${plural(input.normalCount, 'normal')} in dimension ${input.ambientDimension}, ` +
+      `${plural(arrangement.hyperplanes, 'hyperplane')} of rank ${arrangement.rank}, ` +
+      `${number(record.regions)} regions. ` +
+      `$\\chi(t) = ${grouped(chi, '{,}')}${factors === null ? '' : ` = ${grouped(factors, '{,}')}`}$. ` +
+      `${answers.join('; ')}.${multiplicity}}`,
+    '\\end{table}',
+    '',
+    '\\begin{table}',
+    '\\centering',
+    ...tabular('llrl', [
+      ['check', 'route', 'value', 'agree'],
+      ...record.checks.flatMap(({ claim, routes, agrees }) =>
+        routes.map(({ route, value }, i) => [
+          i === 0 ? escapeLatex(claim) : '',
+          escapeLatex(route),
+          checkValue(value),
+          i === 0 ? (agrees ? 'yes' : '\\textbf{no}') : '',
+        ]),
+      ),
+    ]),
+    `\\caption{${title}: each count by independent routes.}`,
+    '\\end{table}',
+    ...run.notRun.map(({ route, why }) => `% not run: ${printable(`${route}: ${why}`)}`),
+    ...(needsCaution(record) ? ['', escapeLatex(caution)] : []),
+  ];
+  return `${lines.join('\n')}\n`;
+}
+
+/** Polynomials are set as mathematics; lists of counts as they are. */
+function checkValue(value: string): string {
+  const text = grouped(value, '{,}');
+  return /^-?(\d+ )?t\b/.test(value) ? `$${text.replace(/\^(\d+)/g, '^{$1}')}$` : text;
+}
