@@ -1,0 +1,187 @@
+// What the two routes to the polynomial would cost, from random descents of the trees they walk
+// (D. Knuth, 1975, Estimating the efficiency of backtrack programs): a descent takes one child at
+// each node and weighs it by the inverse of its probability, so counts are right on average. The
+// probabilities are those that would make every descent count alike in general position.
+import type { Arrangement } from '../arrangement/arrangement.js';
+import { wordsFor } from '../bits/signs.js';
+import { minorBounds } from './deletion-residue.js';
+import { type ResidueField, residueFieldFor } from './residue-field.js';
+import { type ResidueRows, residuesOf, restrictResidues } from './residue-traces.js';
+
+/** The cost of characteristicPolynomialByDeletion. */
+export interface DeletionEstimate {
+  /** Rank-3 arrangements to close: the size of the coefficient of t^3. */
+  readonly bases: number;
+  readonly seconds: number;
+}
+
+/** The cost of listFlats. */
+export interface FlatEstimate {
+  readonly flats: number;
+  readonly seconds: number;
+  /** At the peak, tables only. */
+  readonly bytes: number;
+}
+
+// Seconds, measured on one core of a 2-core machine with Node 20: orders of magnitude elsewhere.
+const perBase = 1.5e-7;
+const perPair = 1.2e-8;
+const perEntry = 4e-9;
+const residuesSlower = 3;
+const perCover = 2.5e-7;
+const perRingEntry = 1.2e-6;
+
+/** Entries of rows that the descents of one estimate may read: about a fifth of a second. */
+const entriesRead = 3_000_000;
+
+/** Random fractions, the same for the same arrangement. */
+function fractions(): () => number {
+  let state = 0x2545f491;
+  return () => {
+    state ^= state << 13;
+    state ^= state >>> 17;
+    state ^= state << 5;
+    return (state >>> 0) / 2 ** 32;
+  };
+}
+
+function binomial(n: number, k: number): number {
+  let product = 1;
+  for (let i = 0; i < k; i++) product *= (n - i) / (i + 1);
+  return n < k ? 0 : product;
+}
+
+function descentsFor<E>(arrangement: Arrangement<E>): number {
+  const { rank, hyperplanes } = arrangement;
+  const entries = hyperplanes.length * rank * rank;
+  return Math.min(4000, Math.max(40, Math.ceil(entriesRead / entries)));
+}
+
+/** About how long deletion-restriction takes; deterministic, a fraction of a second. */
+export function estimateDeletion<E>(arrangement: Arrangement<E>): DeletionEstimate {
+  const { ring, rank, hyperplanes } = arrangement;
+  if (rank < 3) return { bases: 0, seconds: 0 };
+  const field = residueFieldFor(ring.radicand, 0);
+  const whole = residuesOf(field, arrangement);
+  const descents = rank === 3 ? 1 : descentsFor(arrangement);
+  const random = fractions();
+  let bases = 0;
+  let pairs = 0;
+  let entries = 0;
+  for (let d = 0; d < descents; d++) {
+    let node = whole;
+    let weight = 1 / descents;
+    for (let picks = rank - 3; picks > 0; picks--) {
+      const n = node.count;
+      // The node restricts its first i rows to row i, for every i.
+      entries += (weight * n * n * node.width) / 2;
+      if (n < picks) {
+        weight = 0;
+        break;
+      }
+      // Child i leads to about C(i, picks - 1) bases: the largest of `picks` random rows has
+      // that distribution.
+      const i = largestOf(picks, n, random);
+      weight *= binomial(n, picks) / binomial(i, picks - 1);
+      node = restrictResidues(field, node, i, i);
+    }
+    bases += weight;
+    pairs += (weight * node.count * node.count) / 2;
+  }
+  const slow = isPlain(arrangement, rank - 2) ? 1 : residuesSlower;
+  const seconds = slow * (bases * perBase + pairs * perPair + entries * perEntry);
+  return { bases: Math.round(bases), seconds: seconds + hyperplanes.length * 1e-6 };
+}
+
+/** The largest of k different random numbers below n. */
+function largestOf(k: number, n: number, random: () => number): number {
+  const chosen = new Set<number>();
+  // R. Floyd's sampling (1987, A sample of brilliance).
+  for (let j = n - k; j < n; j++) {
+    const x = Math.floor(random() * (j + 1));
+    chosen.add(chosen.has(x) ? j : x);
+  }
+  return Math.max(...chosen);
+}
+
+/** About how many flats there are, and what listing them takes; deterministic, a fraction of a second. */
+export function estimateFlats<E>(arrangement: Arrangement<E>): FlatEstimate {
+  const { ring, rank, hyperplanes } = arrangement;
+  const m = hyperplanes.length;
+  const field = residueFieldFor(ring.radicand, 0);
+  const whole = residuesOf(field, arrangement);
+  const descents = rank <= 2 ? 1 : descentsFor(arrangement);
+  const random = fractions();
+  const sums = { flats: 1 + (rank > 1 ? 1 : 0), covers: 0, entries: 0 };
+  let lowest = 0;
+  for (let d = 0; d < descents; d++) {
+    lowest += descendFlats(field, whole, rank, 1 / descents, random, sums);
+  }
+  const covers = sums.covers + (rank > 1 ? lowest : 1);
+  const flats = sums.flats + (rank > 1 ? 0 : 1);
+  const words = wordsFor(m);
+  const seconds = isPlain(arrangement, rank - 1)
+    ? covers * perCover
+    : covers * perCover + sums.entries * perRingEntry;
+  // Grown tables keep up to 1.6 times what they hold, and the old half while they are copied.
+  const bytes = flats * (4 * words * 2.2 + 12 * 2.2 + 36) + covers * 4 * 2.2;
+  return { flats: Math.round(flats), seconds: seconds + 1e-3, bytes: Math.round(bytes) };
+}
+
+/**
+ * One descent of the tree of flats in which a flat's parent is the span of all but the last of its
+ * lexicographically first basis: the child by a class of traces is in the tree exactly when the
+ * least hyperplane of the class comes after the basis so far. Returns the flats of rank r - 1.
+ */
+function descendFlats(
+  field: ResidueField,
+  whole: ResidueRows,
+  rank: number,
+  start: number,
+  random: () => number,
+  sums: { flats: number; covers: number; entries: number },
+): number {
+  let node = whole;
+  let weight = start;
+  let last = -1;
+  let children = 0;
+  for (let k = 0; k + 1 < rank; k++) {
+    const n = node.count;
+    let first = 0;
+    while (first < n && node.least[first] <= last) first++;
+    children = n - first;
+    sums.covers += weight * n;
+    sums.entries += weight * n * node.width;
+    sums.flats += weight * children;
+    if (children === 0) return 0;
+    if (k + 2 === rank) break;
+    // A child with c siblings after it has about C(c, 0) + C(c, 1) + ... flats below it.
+    const shares: number[] = [];
+    let total = 0;
+    for (let c = children - 1; c >= 0; c--) {
+      let share = 0;
+      for (let e = 0; e <= rank - 2 - k; e++) share += binomial(c, e);
+      shares.push(share);
+      total += share;
+    }
+    let at = random() * total;
+    let pick = 0;
+    while (pick < children - 1 && at >= shares[pick]) at -= shares[pick++];
+    weight *= total / shares[pick];
+    last = node.least[first + pick];
+    node = restrictResidues(field, node, first + pick, n);
+  }
+  return weight * children;
+}
+
+/** Whether minors of k normals are likely to stay within plain doubles. */
+function isPlain<E>(arrangement: Arrangement<E>, k: number): boolean {
+  const { ring, hyperplanes } = arrangement;
+  if (ring.radicand !== null) return false;
+  const bounds = minorBounds(
+    ring,
+    hyperplanes.map((h) => h.essential),
+  );
+  // Typical minors stay some bits below Hadamard's bound.
+  return (bounds[Math.min(k, bounds.length - 1)] ?? 0) < 38;
+}
