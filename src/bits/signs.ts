@@ -47,6 +47,14 @@ export function fullMask(hyperplanes: number): Int32Array {
   return mask;
 }
 
+/**
+ * Rows to allocate when `rows` are needed. Untouched pages cost nothing, copies and first touches do:
+ * small tables grow fourfold.
+ */
+export function grownRows(rows: number): number {
+  return rows < 1 << 20 ? 4 * rows : 2 * rows;
+}
+
 /** A growable table of rows of `wordsPerRow` Int32 words; `words` is replaced when it grows. */
 export class WordTable {
   words: Int32Array;
@@ -61,7 +69,7 @@ export class WordTable {
   /** Makes room for `rows` rows in all. */
   reserve(rows: number): void {
     if (rows * this.wordsPerRow <= this.words.length) return;
-    const grown = new Int32Array(Math.max(rows, Math.ceil(1.6 * this.rows)) * this.wordsPerRow);
+    const grown = new Int32Array(grownRows(rows) * this.wordsPerRow);
     grown.set(this.words.subarray(0, this.rows * this.wordsPerRow));
     this.words = grown;
   }

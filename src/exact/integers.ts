@@ -33,12 +33,14 @@ export function bitLength(a: bigint): number {
 }
 
 /**
- * Exact a/b as a double with relative error at most 2^-51: the operands are shifted down to 63 bits
- * first (each loses less than 2^-62 of itself), converted (2^-53 each) and divided (2^-53).
+ * a/b as a double with relative error at most 2^-51: two conversions and a division, 2^-53 each.
+ * Operands beyond doubles are shifted down to 63 bits first (each loses less than 2^-62 of itself).
  * NaN when the quotient leaves the range of normal doubles.
  */
 export function integerRatio(a: bigint, b: bigint): number {
   if (a === 0n) return 0;
+  const quick = Number(a) / Number(b);
+  if (Math.abs(quick) < 2 ** 800 && Math.abs(quick) > 2 ** -800) return quick;
   const shiftA = Math.max(0, bitLength(a) - 63);
   const shiftB = Math.max(0, bitLength(b) - 63);
   const exponent = shiftA - shiftB;
