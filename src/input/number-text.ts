@@ -4,6 +4,7 @@
 //   product = factor { ("*" | "/") [sign] factor }
 //   factor  = numeral | "sqrt" "(" sum ")" | "(" sum ")"
 //   numeral = digits [ "." [digits] ] [ "e" [sign] digits ] | "." digits [ "e" [sign] digits ]
+import { bitLength } from '../exact/integers.js';
 import {
   addNumbers,
   divideNumbers,
@@ -63,7 +64,6 @@ export function isNumber(text: string): boolean {
 
 class NumberParser {
   readonly #text: string;
-  readonly #largest: bigint;
   #at = 0;
   #depth = 0;
   #expands = false;
@@ -73,7 +73,6 @@ class NumberParser {
   constructor(text: string) {
     // A minus sign as word processors set it; the same length, so offsets hold.
     this.#text = text.replaceAll('\u2212', '-');
-    this.#largest = 10n ** BigInt(expandedDigits + text.length);
   }
 
   parse(): ParsedNumber {
@@ -215,9 +214,9 @@ class NumberParser {
 
   /** Only exponents let a number grow beyond what is written. */
   #checked(x: ExactNumber): ExactNumber {
-    const { a, b, d } = x;
-    const n = this.#largest;
-    if (this.#expands && (a > n || a < -n || b > n || b < -n || d > n)) {
+    if (!this.#expands) return x;
+    const bits = Math.max(bitLength(x.a), bitLength(x.b), bitLength(x.d));
+    if (bits > Math.log2(10) * (expandedDigits + this.#text.length)) {
       const what = `a number with more than ${expandedDigits} digits beyond those written`;
       throw new NumberFault(what, 'use smaller exponents, or scale the normals', 0);
     }
