@@ -24,11 +24,12 @@ export interface FlatEstimate {
 }
 
 // Seconds, measured on one core of a 2-core machine with Node 20: orders of magnitude elsewhere.
-const perBase = 1.5e-7;
-const perPair = 1.2e-8;
-const perEntry = 4e-9;
+const perBase = 2.5e-7;
+const perPair = 1.3e-8;
+const perEntry = 5e-9;
 const residuesSlower = 3;
-const perCover = 2.5e-7;
+const perCover = 2.2e-7;
+const perCoverWord = 5e-8;
 const perRingEntry = 1.2e-6;
 
 /** Entries of rows that the descents of one estimate may read: about a fifth of a second. */
@@ -120,12 +121,11 @@ export function estimateFlats<E>(arrangement: Arrangement<E>): FlatEstimate {
   const covers = sums.covers + (rank > 1 ? lowest : 1);
   const flats = sums.flats + (rank > 1 ? 0 : 1);
   const words = wordsFor(m);
-  const seconds = isPlain(arrangement, rank - 1)
-    ? covers * perCover
-    : covers * perCover + sums.entries * perRingEntry;
-  // Grown tables keep up to 1.6 times what they hold, and the old half while they are copied.
-  const bytes = flats * (4 * words * 2.2 + 12 * 2.2 + 36) + covers * 4 * 2.2;
-  return { flats: Math.round(flats), seconds: seconds + 1e-3, bytes: Math.round(bytes) };
+  let seconds = 1e-3 + covers * (perCover + perCoverWord * words);
+  if (!isPlain(arrangement, rank - 1)) seconds += sums.entries * perRingEntry;
+  // Tables grow by 1.6 and are copied then: about twice what they hold is touched at the peak.
+  const bytes = flats * ((4 * words + 12) * 2 + 36) + covers * 4 * 2;
+  return { flats: Math.round(flats), seconds, bytes: Math.round(bytes) };
 }
 
 /**
