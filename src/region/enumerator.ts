@@ -4,22 +4,12 @@
 // Splitting a region is joining a mask to a sign word: only dimensions 3 and 2 compute.
 import { WordTable } from '../bits/signs.js';
 import type { Ring } from '../exact/ring.js';
+import type { Chart } from './chart.js';
 import { Crossings } from './crossings.js';
 import { FlatLevel } from './level.js';
 import { Restriction } from './restriction.js';
 import { SplitTree } from './split-tree.js';
 import { Sweep } from './sweep.js';
-
-/** One flat to work in: a normal a class, and the classes' hyperplanes by orientation. */
-export interface FlatSource {
-  readonly dimension: number;
-  /** Row a class, over the ring: coordinate 0 first, so class 0 is (positive, 0, .., 0). */
-  readonly normals: unknown[][];
-  readonly pivot: unknown;
-  readonly along: Int32Array;
-  readonly against: Int32Array;
-  readonly least: Int32Array;
-}
 
 /** Every class counts. */
 export const ALL = 2 ** 30;
@@ -47,13 +37,17 @@ export class RegionEnumerator {
     }
   }
 
-  /** Puts a flat at the level of its dimension. */
-  load(source: FlatSource): void {
-    const level = this.levels[source.dimension];
-    level.adopt(this.#ring, source.normals, source.pivot);
-    level.along.set(source.along);
-    level.against.set(source.against);
-    level.least.set(source.least);
+  /** Puts the flat of a chart at the level of its dimension. */
+  load(chart: Chart): void {
+    const level = this.levels[chart.normals[0].length];
+    level.adopt(
+      this.#ring,
+      chart.normals.map((row) => row.slice()),
+      chart.pivot,
+    );
+    level.along.set(chart.along);
+    level.against.set(chart.against);
+    level.least.set(chart.least);
   }
 
   /** Restricts the flat at level e to its class c >= 1, into level e - 1. */

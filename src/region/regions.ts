@@ -1,7 +1,7 @@
 // The list of regions of an arrangement, half of it: every region has a negation.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import { type WordTable, wordsFor } from '../bits/signs.js';
-import { chartOf } from './chart.js';
+import { chartOf, separateClasses } from './chart.js';
 import { ALL, RegionEnumerator } from './enumerator.js';
 
 /** All regions of m hyperplanes: the rows of `half`, and their complements. */
@@ -19,12 +19,7 @@ export function listRegions(arrangement: Arrangement): RegionTable {
   const { ring, rank, hyperplanes } = arrangement;
   const n = hyperplanes.length;
   const enumerator = new RegionEnumerator(ring, n, rank, wordsFor(n));
-  enumerator.load(
-    chartOf(
-      ring,
-      hyperplanes.map((h) => h.essential),
-    ),
-  );
+  enumerator.load(chartOf(ring, separateClasses(hyperplanes.map((h) => h.essential))));
   enumerator.regions(rank, ALL, false);
   return { hyperplanes: n, half: enumerator.tables[rank + 1] };
 }

@@ -10,6 +10,7 @@
 // Everything else goes through the ring.
 import type { Ring } from '../exact/ring.js';
 import { type FlatLevel, PLAIN_ENTRY_LIMIT } from './level.js';
+import { mergeParallel } from './parallel.js';
 
 const DIRECT_LIMIT = 2 ** 26;
 const ROUNDED_FACTOR = 2 ** 49;
@@ -149,8 +150,8 @@ export class Restriction {
     while (ring.sign(own[p]) === 0) p--;
     const flipped = ring.sign(own[p]) < 0;
     const pivot = flipped ? ring.negate(own[p]) : own[p];
-    const classes: unknown[][] = [];
-    const ratios: number[] = [];
+    const restricted: unknown[][] = [];
+    const sources: number[] = [];
     for (let k = 0; k < rows.length; k++) {
       if (k === c) continue;
       const factor = flipped ? ring.negate(rows[k][p]) : rows[k][p];
@@ -163,25 +164,21 @@ export class Restriction {
         );
         row.push(ring.divideExactly(difference, previous));
       }
-      const first = row.findIndex((x) => ring.sign(x) !== 0);
-      const sign = ring.sign(row[first]);
-      // A ratio within 2^-48 tells most pairs apart; those it cannot are multiplied out.
-      const ratio = first + 1 < row.length ? ring.ratio(row[first + 1], row[first]) : 0;
-      let found = -1;
-      for (let j = 0; j < classes.length && found < 0; j++) {
-        const apart =
-          Math.abs(ratio - ratios[j]) > 2 ** -46 * (Math.abs(ratio) + Math.abs(ratios[j]));
-        if (!apart && proportionalOver(ring, row, classes[j])) found = j;
-      }
-      if (found < 0) {
-        this.#copyMasks(from, k, into, classes.length, sign);
-        classes.push(sign < 0 ? row.map((x) => ring.negate(x)) : row);
-        ratios.push(ratio);
-      } else {
-        this.#joinMasks(from, k, into, found, sign);
-      }
+      restricted.push(row);
+      sources.push(k);
     }
-    into.adopt(ring, classes, pivot);
+    const classes = mergeParallel(ring, restricted);
+    classes.forEach(({ members }, target) => {
+      members.forEach(({ row, sign }, i) => {
+        if (i === 0) this.#copyMasks(from, sources[row], into, target, sign);
+        else this.#joinMasks(from, sources[row], into, target, sign);
+      });
+    });
+    into.adopt(
+      ring,
+      classes.map((merged) => merged.normal),
+      pivot,
+    );
   }
 
   #copyMasks(from: FlatLevel, k: number, into: FlatLevel, target: number, sign: number): void {
@@ -276,20 +273,6 @@ function proportional(
   if (u === 0 || v === 0) return false;
   for (let q = first + 1; q < length; q++) {
     if (!productsEqual(row[q], v, rows[offset + q], u)) return false;
-  }
-  return true;
-}
-
-function proportionalOver(ring: Ring<unknown>, row: unknown[], other: unknown[]): boolean {
-  const first = row.findIndex((x) => ring.sign(x) !== 0);
-  const otherFirst = other.findIndex((x) => ring.sign(x) !== 0);
-  if (first !== otherFirst) return false;
-  for (let q = first + 1; q < row.length; q++) {
-    const difference = ring.subtract(
-      ring.multiply(row[q], other[first]),
-      ring.multiply(other[q], row[first]),
-    );
-    if (ring.sign(difference) !== 0) return false;
   }
   return true;
 }
