@@ -28,28 +28,33 @@ export interface FlatFaces {
 
 /** Visits every flat once, in an order fixed by the order of the hyperplanes. Nothing is kept. */
 export function streamFaces(arrangement: Arrangement, visit: (faces: FlatFaces) => void): void {
+  for (const faces of facesByFlat(arrangement)) visit(faces);
+}
+
+/** The same at the pace of whoever takes them, so that writing a long list can be interrupted. */
+export function* facesByFlat(arrangement: Arrangement): Generator<FlatFaces> {
   const { ring, rank } = arrangement;
   const n = arrangement.hyperplanes.length;
   const W = wordsFor(n);
   const enumerator = new RegionEnumerator(ring, n, rank, W);
   const zeros = Array.from({ length: rank + 1 }, () => new Int32Array(W));
-  const descend = (e: number, last: number): void => {
+  function* descend(e: number, last: number): Generator<FlatFaces> {
     const table = enumerator.tables[e + 1];
     const zero = zeros[e];
     table.rows = 0;
     enumerator.regions(e, ALL, false);
     const { along, against, least, classes } = enumerator.levels[e];
     const { words, rows } = table;
-    visit({ dimension: e, zero, words, rows, classes, along, against, mirrored: true });
+    yield { dimension: e, zero, words, rows, classes, along, against, mirrored: true };
     if (e === 1) return;
     const below = zeros[e - 1];
     for (let c = 1; c < classes; c++) {
       if (least[c] < last) continue;
       for (let w = 0; w < W; w++) below[w] = zero[w] | along[c * W + w] | against[c * W + w];
       enumerator.restrict(e, c);
-      descend(e - 1, least[c]);
+      yield* descend(e - 1, least[c]);
     }
-  };
+  }
   let classes = separateClasses(arrangement.hyperplanes.map((h) => h.essential));
   const inside = new Int32Array(W);
   for (let e = rank; e >= 1; e--) {
@@ -57,12 +62,12 @@ export function streamFaces(arrangement: Arrangement, visit: (faces: FlatFaces) 
     const chart = chartOf(ring, classes);
     enumerator.load(chart);
     zeros[e].set(inside);
-    descend(e, -1);
+    yield* descend(e, -1);
     for (let w = 0; w < W; w++) inside[w] |= chart.along[w] | chart.against[w];
     classes = insideFirst(ring, chart);
   }
   const none = new Int32Array(W);
-  visit({
+  yield {
     dimension: 0,
     zero: inside,
     words: none,
@@ -71,7 +76,7 @@ export function streamFaces(arrangement: Arrangement, visit: (faces: FlatFaces) 
     along: none,
     against: none,
     mirrored: false,
-  });
+  };
 }
 
 /** Faces by dimension above the lineality space, 0 to rank, by listing every one. */
