@@ -7,6 +7,7 @@ import { magnitude } from '../exact/integers.js';
 import { PlainDeletion } from './deletion-plain.js';
 import { ResidueDeletion, UnluckyPrime } from './deletion-residue.js';
 import { DeletionTally } from './deletion-tally.js';
+import { inSmallCoordinates } from './own-basis.js';
 import { residueFieldFor } from './residue-field.js';
 
 /** How a run reports itself, and which arithmetic it may use. */
@@ -26,7 +27,11 @@ export function characteristicPolynomialByDeletion<E>(
   const n = BigInt(hyperplanes.length);
   if (rank === 1) return [-1n, 1n];
   if (rank === 2) return [n - 1n, -n, 1n];
-  const normals = hyperplanes.map((h) => h.essential);
+  const given = hyperplanes.map((h) => h.essential);
+  const normals =
+    ring.radicand === null
+      ? (inSmallCoordinates(given as unknown as bigint[][]) as unknown as E[][])
+      : given;
   const plain =
     options.arithmetic === 'residues' || ring.radicand !== null
       ? null

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import type { Arrangement } from '../../src/arrangement/arrangement.js';
 import { faceCountsByMoebius } from '../../src/flat/by-moebius.js';
 import { type FlatLattice, listFlats } from '../../src/flat/lattice.js';
+import { moebiusValues } from '../../src/flat/moebius.js';
 import { arrangementOf, type Entry, smallRows } from '../support/arrangements.js';
 import { shuffled, unimodularChange } from '../support/coordinates.js';
 import { slowFlats, slowMoebius } from '../support/slow-flats.js';
@@ -30,6 +31,8 @@ function expectSlowFlats(arrangement: Arrangement): void {
     expect([...covers].sort((a, b) => a - b)).toEqual(above.map((x) => x.set));
   }
 }
+
+const sum = (list: number[]): number => list.reduce((a, b) => a + b, 0);
 
 /** Faces by dimension from the definition of mu(X, Y), flat by flat. */
 function slowFaceCounts(arrangement: Arrangement): bigint[] {
@@ -160,6 +163,57 @@ describe('flats', () => {
     expect(seen.every((flats, i) => i === 0 || flats >= seen[i - 1])).toBe(true);
     // Moment curve: in general position, so every subset below the rank is a flat.
     expect(lattice.flatCount).toBe(1 + 40 + 780 + 9880 + 91390 + 1);
+  });
+});
+
+describe('values past 2^53', () => {
+  // Not of an arrangement (those need more flats than fit), but a graded order with the same data:
+  // one bottom, 8 ranks of 129 elements, one top, everything below everything of the next rank, and
+  // sets so that the atom taken is never below: each value is -129 times one of the rank before.
+  const N = 129;
+  const r = 9;
+  const sizes = [1, ...new Array<number>(r - 1).fill(N), 1];
+  const rankOffsets = Int32Array.from([0, ...sizes.map((_, k) => sum(sizes.slice(0, k + 1)))]);
+  const flatCount = rankOffsets[r + 1];
+  const zero = new Int32Array(flatCount);
+  const coverOffsets = new Int32Array(flatCount + 1);
+  const targets: number[] = [];
+  for (let k = 0; k <= r; k++) {
+    for (let f = rankOffsets[k]; f < rankOffsets[k + 1]; f++) {
+      zero[f] = k === 0 ? 0 : 1 << (r - k);
+      if (k < r) for (let y = rankOffsets[k + 1]; y < rankOffsets[k + 2]; y++) targets.push(y);
+      coverOffsets[f + 1] = targets.length;
+    }
+  }
+  const covers = {
+    rank: r,
+    hyperplanes: r,
+    wordsPerRow: 1,
+    flatCount,
+    rankOffsets,
+    zero,
+    coverOffsets,
+    coverTargets: Int32Array.from(targets),
+  };
+
+  it('are exact', () => {
+    const moebius = moebiusValues(covers);
+    const power = (k: number) => BigInt(N) ** BigInt(k);
+    for (let k = 1; k <= r; k++) {
+      const expected = k % 2 === 0 ? power(k - 1) : -power(k - 1);
+      for (let f = rankOffsets[k]; f < rankOffsets[k + 1]; f++) expect(moebius[f]).toBe(expected);
+    }
+    // 129^8 is odd and above 2^56: no double holds it.
+    expect(moebius[flatCount - 1]).toBe(-(129n ** 8n));
+    // Above an element of rank j: itself, 129^i over all of rank j + i, and the top.
+    const above = (j: number): bigint => {
+      if (j === r) return 1n;
+      let total = 1n + power(r - 1 - j);
+      for (let i = 1; i <= r - 1 - j; i++) total += power(i);
+      return total;
+    };
+    const expected = sizes.map((size, j) => BigInt(size) * above(j)).reverse();
+    expect(faceCountsByMoebius({ ...covers, moebius })).toEqual(expected);
   });
 });
 

@@ -97,24 +97,86 @@ describe('the characteristic polynomial', () => {
     );
   });
 
+  it('is right for planted dependencies among normals of every size', () => {
+    // No choice of coordinates makes these numbers small, so each gate has to do its work.
+    const size = fc.constantFrom(9n, 99n, 3000n, 10n ** 5n, 10n ** 7n, 10n ** 12n, 10n ** 25n);
+    const planted = size.chain((bound) =>
+      fc.integer({ min: 3, max: 5 }).chain((r) =>
+        fc.record({
+          free: fc.array(
+            fc.array(fc.bigInt({ min: -bound, max: bound }), { minLength: r, maxLength: r }),
+            { minLength: 3, maxLength: 5 },
+          ),
+          sums: fc.array(
+            fc.tuple(fc.nat(7), fc.integer({ min: -3, max: 3 }), fc.nat(7), fc.constantFrom(1, 2)),
+            { minLength: 2, maxLength: 5 },
+          ),
+        }),
+      ),
+    );
+    fc.assert(
+      fc.property(planted, ({ free, sums }) => {
+        const rows = [...free];
+        for (const [i, a, j, b] of sums) {
+          const x = rows[i % rows.length];
+          const y = rows[j % rows.length];
+          rows.push(x.map((e, k) => BigInt(a) * e + BigInt(b) * y[k]));
+        }
+        const nonzero = rows.filter((row) => row.some((x) => x !== 0n));
+        if (nonzero.length === 0) return;
+        const arrangement = arrangementOf(nonzero);
+        expectPolynomial(arrangement, slowPolynomial(arrangement));
+      }),
+      { numRuns: 60 },
+    );
+  });
+
   it('tells normals apart whose ratios are one double', () => {
-    for (const x of [2n ** 27n, 2n ** 30n, 2n ** 40n, 2n ** 52n - 3n, 10n ** 24n]) {
+    // Modulo the last row, (2,3,7) or (2,3,2,7), two rows become (u, t) and (u + 7, t + 7) with
+    // t = u - 1, or these with a third entry like the first: different, but one double each.
+    let tried = 0;
+    for (let X = 7 * (2 ** 26 - 40) + 5; tried < 4; X += 7) {
+      const u = [X, X + 7];
+      if ((X - 1) / X !== (X + 6) / (X + 7)) continue;
+      tried++;
+      // 7 a - 2 d = u and 7 b - 3 d = u - 1 with d = 1.
+      const lifted = u.map((x) => [(x + 2) / 7, (x - 1 + 3) / 7]);
+      expect(lifted.flat().every((x) => Number.isInteger(x) && x < 2 ** 26)).toBe(true);
+      const [p, q] = lifted;
       const three = arrangementOf([
         [1, 0, 0],
-        [0, x, x - 1n],
-        [1, x + 1n, x],
-        [1, x, x - 1n],
         [0, 1, 0],
+        [0, 0, 1],
+        [p[0], p[1], 1],
+        [q[0], q[1], 1],
+        [p[0] + 2, p[1] + 3, 8],
+        [2, 3, 7],
       ]);
       expectPolynomial(three, slowPolynomial(three));
       const four = arrangementOf([
         [1, 0, 0, 0],
+        [0, 1, 0, 0],
+        [0, 0, 1, 0],
+        [0, 0, 0, 1],
+        [p[0], p[1], p[0], 1],
+        [q[0], q[1], q[0], 1],
+        [p[0] + 2, p[1] + 3, p[0] + 2, 8],
+        [2, 3, 2, 7],
+      ]);
+      expectPolynomial(four, slowPolynomial(four));
+    }
+    for (const x of [2n ** 27n, 2n ** 30n, 2n ** 40n, 2n ** 52n - 3n, 10n ** 24n]) {
+      const near = arrangementOf([
+        [1, 0, 0, 0],
+        [0, 1, 0, 0],
+        [0, 0, 1, 0],
+        [0, 0, 0, 1],
         [1, 2, x, x - 1n],
         [2, 1, x + 1n, x],
         [3, 1, x, x - 1n],
-        [0, 1, 0, 0],
+        [1, 1, 1, 1],
       ]);
-      expectPolynomial(four, slowPolynomial(four));
+      expectPolynomial(near, slowPolynomial(near));
     }
   });
 
