@@ -31,6 +31,9 @@ export const quickPolynomialSeconds = 5;
 /** Regions times hyperplanes times coordinates up to which the census looks at each region alone. */
 export const regionCheckEntries = 3_000_000;
 
+/** Regions squared times coordinates up to which every vertex is compared with every other. */
+export const extremeCheckSteps = 100_000_000;
+
 /** Columns of the terminal page. */
 export const pageColumns = 80;
 

@@ -89,8 +89,9 @@ function partOf(path: string): string {
 }
 
 /** What a source text imports: static, re-exported, dynamic, and types by import(). */
-export function importsOf(text: string): string[] {
-  const pattern = /(?:\bfrom\s*|\bimport\s*\(\s*|^\s*import\s+)(['"])([^'"]+)\1/gm;
+function importsOf(text: string): string[] {
+  const pattern =
+    /(?:\b(?:import|export)\b[^'"();]*?\bfrom\s*|\bimport\s*\(\s*|^\s*import\s+)(['"])([^'"]+)\1/gm;
   return [...text.matchAll(pattern)].map((match) => match[2]);
 }
 
@@ -109,7 +110,7 @@ const outside = imports.filter(({ relative }) => !relative);
 describe('the reader of import lines', () => {
   it('sees every way to import', () => {
     const text = `import a from './a.js';\nimport type { B } from "./b.js";\nexport * from './c.js';
-      import './d.js';\nconst e = await import('./e.js');\nimport {\n  f,\n} from './f.js';`;
+      import './d.js';\nconst e = await import('./e.js');\nimport {\n  f,\n} from './f.js';\ncall('from', 'g');`;
     expect(importsOf(text)).toEqual(['./a.js', './b.js', './c.js', './d.js', './e.js', './f.js']);
   });
 

@@ -46,7 +46,10 @@ export function formatLatex(record: CensusRecord): string {
   const sum = (list: readonly string[] | null): string => number(list && total(list));
   const title = escapeLatex(titleOf(record));
   const { linesByMultiplicity } = record.properties;
-  const answers = propertyRows(record).map(([name, text]) => `${name}: ${text.replace(/:.*/, '')}`);
+  const answers = propertyRows(record).map(([name, text]) => {
+    if (text.startsWith('yes')) return name;
+    return text.startsWith('no:') ? `not ${name}` : `${name}: not decided`;
+  });
   const multiplicity =
     linesByMultiplicity === null
       ? ''
@@ -71,12 +74,12 @@ export function formatLatex(record: CensusRecord): string {
       `${plural(arrangement.hyperplanes, 'hyperplane')} of rank ${arrangement.rank}, ` +
       `${number(record.regions)} regions. ` +
       `$\\chi(t) = ${grouped(chi, '{,}')}${factors === null ? '' : ` = ${grouped(factors, '{,}')}`}$. ` +
-      `${answers.join('; ')}.${multiplicity}}`,
+      `The arrangement is ${answers.join(', ')}.${multiplicity}}`,
     '\\end{table}',
     '',
     '\\begin{table}',
     '\\centering',
-    ...tabular('llrl', [
+    ...tabular('llp{0.4\\linewidth}l', [
       ['check', 'route', 'value', 'agree'],
       ...record.checks.flatMap(({ claim, routes, agrees }) =>
         routes.map(({ route, value }, i) => [

@@ -68,17 +68,25 @@ export function wrap(text: string, columns: number): string[] {
   return lines;
 }
 
+/** A polynomial or a product whose terms and factors stay whole when it is wrapped. */
+export function unbroken(formula: string): string {
+  return formula
+    .replace(/\(t ([+-]) /g, '(t\u00a0$1\u00a0')
+    .replace(/ ([+-]) /g, ' $1\u00a0')
+    .replace(/(\d) t/g, '$1\u00a0t');
+}
+
 /** `first` and then the text wrapped beside it, hanging under its own beginning. */
 export function hanging(first: string, text: string, columns: number): string[] {
   const indent = columnsOf(first);
   return wrap(text, columns - indent).map(
-    (line, i) => (i === 0 ? first : ' '.repeat(indent)) + line,
+    (line, i) => (i === 0 ? first : ' '.repeat(indent)) + line.replaceAll('\u00a0', ' '),
   );
 }
 
 /** Decimal digits in groups of three: `39,296,883`; other text is left as it is. */
 export function grouped(integer: string, separator = ','): string {
-  return integer.replace(/\d{5,}/g, (digits) => digits.replace(/\B(?=(\d{3})+$)/g, separator));
+  return integer.replace(/\d{4,}/g, (digits) => digits.replace(/\B(?=(\d{3})+$)/g, separator));
 }
 
 /**

@@ -72,13 +72,13 @@ export function formatMarkdown(record: CensusRecord): string {
           record.checks.flatMap(({ claim, routes, agrees }) =>
             routes.map(({ route, value }, i) => [
               i === 0 ? claim : '',
-              escapeMarkdown(route),
+              route.replaceAll('|', '\\|'),
               grouped(value),
               i === 0 ? (agrees ? 'yes' : '**NO**') : '',
             ]),
           ),
         ),
-    run.notRun.map(({ route, why }) => `- Not run: ${route}: ${escapeMarkdown(why)}`),
+    run.notRun.map(({ route, why }) => `- Not run: ${route}: ${why}`),
     needsCaution(record) ? [caution] : [],
     [`signwright ${run.version}, ${run.seconds} s.`],
   ];

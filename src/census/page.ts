@@ -1,6 +1,16 @@
 // The census as a page for a terminal of 80 columns, readable without colour.
 import { pageColumns } from '../limits.js';
-import { columnsOf, cut, grouped, hanging, padRight, printable, table, wrap } from './layout.js';
+import {
+  columnsOf,
+  cut,
+  grouped,
+  hanging,
+  padRight,
+  printable,
+  table,
+  unbroken,
+  wrap,
+} from './layout.js';
 import type { CensusRecord } from './record.js';
 import {
   caution,
@@ -46,7 +56,7 @@ function given(record: CensusRecord): string[] {
   const { input, arrangement: of } = record;
   const title = printable(titleOf(record));
   const lines = wrap(title, pageColumns).slice(0, 3);
-  if (input.title !== null) lines.push(...term('from', printable(input.source)));
+  if (title !== input.source) lines.push(...term('from', printable(input.source)));
   const named = input.coordinates?.map((name) => cut(printable(name), labelColumns)).join(', ');
   const field = input.field === 'Q' ? 'rational' : `in ${input.field}`;
   const space = `R^${input.ambientDimension}${named ? ` (${named})` : ''}`;
@@ -104,18 +114,13 @@ function counts(record: CensusRecord): string[] {
 function polynomial(record: CensusRecord): string[] {
   const { text, integerRoots } = record.characteristicPolynomial;
   const lines = ['Characteristic polynomial'];
-  // Terms are kept whole where a line holds them: a sign goes with the term that it begins.
-  const terms = grouped(text)
-    .replace(/ ([+-]) /g, ' $1\u00a0')
-    .replace(/(\d) t/g, '$1\u00a0t');
-  lines.push(...hanging('  ', terms, pageColumns).map((line) => line.replaceAll('\u00a0', ' ')));
+  lines.push(...hanging('  ', unbroken(grouped(text)), pageColumns));
   const factors = rootFactors(record);
   if (factors === null || integerRoots === null) {
     lines.push('  its roots are not all integers');
     return lines;
   }
-  const kept = grouped(factors).replace(/\(t ([+-]) /g, '(t\u00a0$1\u00a0');
-  lines.push(...hanging('  = ', kept, pageColumns).map((line) => line.replaceAll('\u00a0', ' ')));
+  lines.push(...hanging('  = ', unbroken(grouped(factors)), pageColumns));
   lines.push(...term('integer roots', integerRoots.map((root) => grouped(root)).join(', ')));
   return lines;
 }
@@ -126,7 +131,7 @@ function arrangement(record: CensusRecord): string[] {
   const lineCounts = record.properties.linesByMultiplicity;
   if (lineCounts !== null) {
     const kinds = Object.entries(lineCounts).map(
-      ([k, count]) => `${grouped(count)} on ${k} planes`,
+      ([k, count]) => `${grouped(count)} in ${k} planes`,
     );
     lines.push(...term('lines', kinds.join(', ')));
   }
@@ -155,7 +160,9 @@ function checks({ checks: all }: CensusRecord): string[] {
     const width = Math.max(...routes.map(({ route }) => columnsOf(route)));
     lines.push(`  ${padRight(claim, pageColumns - 12)}${agrees ? 'agree' : 'DISAGREE'}`);
     for (const { route, value } of routes) {
-      lines.push(...hanging(`    ${padRight(route, width)}  `, grouped(value), pageColumns));
+      lines.push(
+        ...hanging(`    ${padRight(route, width)}  `, unbroken(grouped(value)), pageColumns),
+      );
     }
   }
   return lines;

@@ -12,9 +12,9 @@ export function needsCaution({ input }: CensusRecord): boolean {
   return input.ranges !== null || input.coordinates !== null;
 }
 
-/** The title, or the name of the source where there is none. */
+/** The title, or the name of the file without its folders where there is none. */
 export function titleOf({ input }: CensusRecord): string {
-  return input.title ?? input.source;
+  return input.title ?? input.source.replace(/^.*[/\\](?=.)/, '');
 }
 
 export function plural(count: number, noun: string): string {

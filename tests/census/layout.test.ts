@@ -50,11 +50,10 @@ describe('single values', () => {
 
   it('groups digits as JavaScript itself does in English', () => {
     fc.assert(
-      fc.property(fc.bigInt({ min: 10_000n, max: 10n ** 40n }), (n) => {
+      fc.property(fc.bigInt({ min: 0n, max: 10n ** 40n }), (n) => {
         expect(grouped(n.toString())).toBe(n.toLocaleString('en-US'));
       }),
     );
-    expect(grouped('1234')).toBe('1234');
     expect(grouped('t^3 - 12345 t')).toBe('t^3 - 12,345 t');
   });
 });

@@ -1,0 +1,93 @@
+// Words in an unexpected order: noticed before the arguments are parsed, and named.
+import { InputError } from '../errors.js';
+import { either } from './options.js';
+
+/** Commands that take a word before what they work on, with what it is and the words they take. */
+const wordFirst: Record<string, { readonly noun: string; readonly words: readonly string[] }> = {
+  draw: { noun: 'picture', words: ['hasse'] },
+  make: {
+    noun: 'family',
+    words: [
+      'reflection',
+      'all-subsets',
+      'threshold',
+      'graph',
+      'generic',
+      'random',
+      'polar-zonohedron',
+      'comparisons',
+    ],
+  },
+};
+
+/** Commands of the trade that this version does not have. */
+const later = [
+  'zonotope',
+  'symmetry',
+  'report',
+  'locate',
+  'separation',
+  'compare',
+  'audit',
+  'snap',
+  'derive',
+  'worker',
+  'gather',
+];
+
+/** Pictures that this version does not draw. */
+const laterPictures = ['sphere', 'lines', 'zonotope', 'tiling', 'region-graph'];
+
+/** Throws InputError with the command as it was meant, where that can be told. */
+export function checkOrder(args: readonly string[], commands: readonly string[]): void {
+  const words = args.filter((arg) => !arg.startsWith('-') || arg === '-');
+  const [first, second] = words;
+  if (first === undefined || first === 'help') return;
+  const known = (word: string | undefined): boolean =>
+    word !== undefined && commands.includes(word);
+  if (!known(first)) {
+    const command = words.find(known);
+    if (command !== undefined) {
+      const rest = words.filter((word) => word !== command);
+      throw new InputError(
+        `the command comes first, before ${first}`,
+        `write: signwright ${inOrder(command, rest).join(' ')}`,
+      );
+    }
+    if (later.includes(first)) {
+      throw new InputError(
+        `${first}: this version has no such command`,
+        `it has ${commands.join(', ')}`,
+      );
+    }
+    return;
+  }
+  const takes = wordFirst[first];
+  if (takes === undefined || (second !== undefined && takes.words.includes(second))) return;
+  if (second === undefined) {
+    if (args.includes('--help') || args.includes('-h')) return;
+    throw new InputError(`${first}: no ${takes.noun} is named`, `give ${either(takes.words)}`);
+  }
+  if (first === 'draw' && laterPictures.includes(second)) {
+    throw new InputError(
+      `draw ${second}: this version has no such picture`,
+      `it has ${takes.words.join(', ')}`,
+    );
+  }
+  if (words.slice(2).some((word) => takes.words.includes(word))) {
+    throw new InputError(
+      `${first}: the ${takes.noun} comes first, before ${second}`,
+      `write: signwright ${inOrder(first, words.slice(1)).join(' ')}`,
+    );
+  }
+  throw new InputError(`${first} ${second}: no such ${takes.noun}`, `give ${either(takes.words)}`);
+}
+
+function inOrder(command: string, rest: readonly string[]): string[] {
+  const words = wordFirst[command]?.words ?? [];
+  return [
+    command,
+    ...rest.filter((word) => words.includes(word)),
+    ...rest.filter((word) => !words.includes(word)),
+  ];
+}
