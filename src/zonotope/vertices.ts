@@ -21,6 +21,15 @@ export interface ZonotopeFace {
   readonly free: number[];
 }
 
+/** Where a zonotope is put: each point x becomes scale x + shift, scale positive. */
+export interface Placement {
+  readonly scale: ExactNumber;
+  /** d numbers. */
+  readonly shift: readonly ExactNumber[];
+  /** The field of scale and shift, the arrangement's own or, where that is Q, any. */
+  readonly radicand: bigint | null;
+}
+
 /** Adds generators up by the signs of their hyperplanes, exactly. */
 export class ZonotopeVertices {
   private readonly arrangement: Arrangement;
@@ -38,24 +47,30 @@ export class ZonotopeVertices {
   private readonly plain: { start: Float64Array; step: Float64Array } | null;
   private readonly sum: Float64Array;
 
-  constructor(arrangement: Arrangement) {
+  /** The vertices and faces of the zonotope itself, or of the zonotope scaled and shifted. */
+  constructor(arrangement: Arrangement, placement: Placement | null = null) {
     const { generators, dimension, hyperplanes, hyperplaneOf, orientationOf } = arrangement;
-    const { normals, ranges, radicand } = generators;
+    const { normals, ranges } = generators;
+    const radicand = generators.radicand ?? placement?.radicand ?? null;
+    const scale = placement?.scale ?? exactOne;
+    const shift = placement?.shift ?? normals[0].map(() => exactZero);
     this.arrangement = arrangement;
     this.dimension = dimension;
     this.width = radicand === null ? dimension : 2 * dimension;
     const ends = normals.map((normal, i) => {
-      const at = (t: ExactNumber): ExactNumber[] =>
-        normal.map((x) => multiplyNumbers(t, x, radicand ?? 0n));
+      const at = (t: ExactNumber): ExactNumber[] => {
+        const factor = multiplyNumbers(t, scale, radicand ?? 0n);
+        return normal.map((x) => multiplyNumbers(factor, x, radicand ?? 0n));
+      };
       const range = ranges === null ? null : ranges[i];
       const low = at(range?.low ?? exactZero);
       const high = at(range?.high ?? exactOne);
       return orientationOf[i] > 0 ? { minus: low, plus: high } : { minus: high, plus: low };
     });
     const all = ends.flatMap(({ minus, plus }) => [...minus, ...plus]);
-    this.denominator = commonDenominator(all);
+    this.denominator = commonDenominator([...all, ...shift]);
     const zeroVector = (): bigint[] => new Array<bigint>(this.width).fill(0n);
-    const start = zeroVector();
+    const start = this.numerators(shift);
     const negative = hyperplanes.map(zeroVector);
     const step = hyperplanes.map(zeroVector);
     ends.forEach(({ minus, plus }, i) => {
