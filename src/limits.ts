@@ -13,8 +13,8 @@ export const squareFreeTrialDivisor = 1_000_000;
 /** Entries (normals times coordinates) that a made family may have. */
 export const familyEntries = 1_000_000;
 
-/** Nodes and edges together of a graph written as GEXF, which graphology holds as objects. */
-export const gexfElements = 1_000_000;
+/** Nodes and edges together of a graph written as GEXF, which graphology holds as objects: seconds. */
+export const gexfElements = 250_000;
 
 /** Seconds a route may take by estimate before the census leaves it out (`--budget`). */
 export const defaultRouteSeconds = 60;

@@ -1,10 +1,9 @@
 // The list of faces as CSV, NDJSON and JSON, pulled from rows or pushed as the faces stream past.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import type { FaceRow } from '../census/face-rows.js';
-import { formatNumber } from '../exact/number.js';
 import type { RowWriter } from './chunks.js';
 import { writeRows } from './chunks.js';
-import { coordinateColumns, csvLine, jsonNumber } from './fields.js';
+import { coordinateColumns, csvLine, csvNumber, jsonNumber } from './fields.js';
 import { jsonListEnd, jsonListRow, jsonListStart } from './heading.js';
 import type { ListFormat } from './regions.js';
 
@@ -20,7 +19,7 @@ export function faceWriter(arrangement: Arrangement, format: ListFormat): RowWri
     return {
       head: csvLine(['signs', 'dimension', 'zonotope_dimension', ...base, 'free']),
       row: (row) => {
-        const numbers = row.base.map((x) => formatNumber(x, radicand)).join(',');
+        const numbers = row.base.map((x) => csvNumber(x, radicand)).join(',');
         const { signs, dimension, zonotopeDimension, free } = row;
         return `${signs},${dimension},${zonotopeDimension},${numbers},${free.join(' ')}\n`;
       },

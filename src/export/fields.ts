@@ -33,6 +33,11 @@ export function coordinateColumns(
   return Array.from({ length: dimension }, (_, i) => csvField(`${prefix}_${names?.[i] ?? i + 1}`));
 }
 
+/** An exact number as users write it; integers, nearly all of a list, by the short way. */
+export function csvNumber(value: ExactNumber, radicand: bigint | null): string {
+  return value.b === 0n && value.d === 1n ? value.a.toString() : formatNumber(value, radicand);
+}
+
 /**
  * An integer in JSON: a number up to 2^53 - 1 in size, a decimal string beyond, where a reader that
  * takes doubles would lose digits.

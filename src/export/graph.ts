@@ -41,7 +41,7 @@ function titleOf(arrangement: Arrangement): string {
 /** The face poset: nodes f1, f2, ... with `label` and `signs`, dimension and zonotope dimension. */
 export function faceGraph(arrangement: Arrangement, poset: FacePoset): GraphTable {
   return {
-    title: `Faces of ${titleOf(arrangement)}`,
+    title: `${titleOf(arrangement)}: faces`,
     description:
       'Face poset of a central hyperplane arrangement; an edge runs from a face to one that covers ' +
       'it, a dimension higher. Dimensions are counted above the lineality space.',
@@ -77,7 +77,7 @@ function* faceNodes(arrangement: Arrangement, poset: FacePoset): Generator<(stri
  */
 export function flatGraph(arrangement: Arrangement, lattice: FlatLattice): GraphTable {
   return {
-    title: `Flats of ${titleOf(arrangement)}`,
+    title: `${titleOf(arrangement)}: flats`,
     description:
       'Lattice of flats of a central hyperplane arrangement; an edge runs from a flat to one that ' +
       'covers it, a rank higher: the smaller subspace. Dimensions are counted above the lineality space.',

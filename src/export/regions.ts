@@ -1,10 +1,9 @@
 // The list of regions as CSV, NDJSON and JSON.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import type { RegionRow } from '../census/region-rows.js';
-import { formatNumber } from '../exact/number.js';
 import type { RowWriter } from './chunks.js';
 import { writeRows } from './chunks.js';
-import { coordinateColumns, csvLine, jsonInteger, jsonNumber } from './fields.js';
+import { coordinateColumns, csvLine, csvNumber, jsonInteger, jsonNumber } from './fields.js';
 import { jsonListEnd, jsonListRow, jsonListStart } from './heading.js';
 
 /** The formats every list can be written in. */
@@ -30,7 +29,7 @@ export function regionWriter(arrangement: Arrangement, format: ListFormat): RowW
       head: csvLine(columns),
       row: ({ signs, walls, point, vertex }) =>
         `${signs},${walls.join(' ')},${point.join(',')},${vertex
-          .map((x) => formatNumber(x, radicand))
+          .map((x) => csvNumber(x, radicand))
           .join(',')}\n`,
       tail: '',
     };

@@ -36,54 +36,90 @@ export function findFaceTypes(poset: FacePoset, selection: FaceSelection, most: 
   const through = Array.from({ length: poset.flatCount }, (_, x) =>
     countBits(flatZero, x * wordsPerRow, wordsPerRow),
   );
-  const features = (v: number): [number, number, number] => [
-    through[flatOf[faces[v]]],
-    down[v],
-    upOffsets[v + 1] - upOffsets[v],
+  // In order of weight: what the coarser groupings drop comes last.
+  const features = [
+    (v: number) => through[flatOf[faces[v]]],
+    (v: number) => down[v],
+    (v: number) => upOffsets[v + 1] - upOffsets[v],
   ];
   const typeOf = new Int32Array(faces.length);
   const types: FaceType[] = [];
   for (let layer = 0; layer + 1 < layerOffsets.length; layer++) {
     const [from, to] = [layerOffsets[layer], layerOffsets[layer + 1]];
-    // Features kept: all, then without covers from above, then hyperplanes only, then none.
-    for (const kept of [3, 2, 1, 0]) {
-      const groups = new Map<string, number[]>();
-      for (let v = from; v < to && groups.size <= most; v++) {
-        const key = features(v).slice(0, kept).join();
-        const group = groups.get(key);
-        if (group === undefined) groups.set(key, [v]);
-        else group.push(v);
-      }
-      if (groups.size > most) continue;
-      const sorted = [...groups.values()].sort((a, b) => compare(features(a[0]), features(b[0])));
-      for (const group of sorted) {
-        for (const v of group) typeOf[v] = types.length;
-        const span = (feature: number): Span => {
-          let [least, largest] = [Number.POSITIVE_INFINITY, 0];
-          for (const v of group) {
-            const value = features(v)[feature];
-            least = Math.min(least, value);
-            largest = Math.max(largest, value);
-          }
-          return [least, largest];
-        };
-        types.push({
-          layer,
-          count: group.length,
-          hyperplanes: span(0),
-          covers: span(1),
-          coveredBy: span(2),
-        });
-      }
-      break;
+    let groups: Group[] | null = null;
+    for (let kept = features.length; groups === null; kept--) {
+      groups = groupFaces(from, to, features, kept, kept === 0 ? 1 : most, typeOf);
     }
+    // Groups come in the order of their first faces; in the picture the least comes first.
+    const sorted = groups.map((group, i) => ({ group, i }));
+    sorted.sort((x, y) => compare(x.group, y.group) || x.i - y.i);
+    const number = new Int32Array(groups.length);
+    for (const { group, i } of sorted) {
+      number[i] = types.length;
+      const [hyperplanes, covers, coveredBy] = group.spans;
+      types.push({ layer, count: group.count, hyperplanes, covers, coveredBy });
+    }
+    for (let v = from; v < to; v++) typeOf[v] = number[typeOf[v]];
   }
   return { types, joins: joinsOf(selection, typeOf, types.length) };
 }
 
-function compare(a: readonly number[], b: readonly number[]): number {
-  const i = a.findIndex((x, k) => x !== b[k]);
-  return i < 0 ? 0 : a[i] - b[i];
+interface Group {
+  count: number;
+  /** For each feature its least and largest value. */
+  readonly spans: [number, number][];
+}
+
+/**
+ * Groups faces [from, to) that share the first `kept` features, and writes each face's group into
+ * `groupOf`; null when there are more than `most` groups.
+ */
+function groupFaces(
+  from: number,
+  to: number,
+  features: readonly ((v: number) => number)[],
+  kept: number,
+  most: number,
+  groupOf: Int32Array,
+): Group[] | null {
+  const groups: Group[] = [];
+  // Nested maps, a level a feature: exact keys without making strings of millions of faces.
+  type Level = Map<number, Level | number>;
+  const root: Level = new Map();
+  for (let v = from; v < to; v++) {
+    let level = root;
+    for (let i = 0; i + 1 < kept; i++) {
+      const value = features[i](v);
+      let next = level.get(value) as Level | undefined;
+      if (next === undefined) {
+        next = new Map();
+        level.set(value, next);
+      }
+      level = next;
+    }
+    const last = kept === 0 ? 0 : features[kept - 1](v);
+    let group = level.get(last) as number | undefined;
+    if (group === undefined) {
+      group = groups.length;
+      if (group === most) return null;
+      level.set(last, group);
+      groups.push({ count: 0, spans: features.map((feature) => [feature(v), feature(v)]) });
+    }
+    groupOf[v] = group;
+    const own = groups[group];
+    own.count++;
+    for (let i = 0; i < features.length; i++) {
+      const value = features[i](v);
+      if (value < own.spans[i][0]) own.spans[i][0] = value;
+      if (value > own.spans[i][1]) own.spans[i][1] = value;
+    }
+  }
+  return groups;
+}
+
+function compare(a: Group, b: Group): number {
+  const i = a.spans.findIndex(([least], k) => least !== b.spans[k][0]);
+  return i < 0 ? 0 : a.spans[i][0] - b.spans[i][0];
 }
 
 function joinsOf(selection: FaceSelection, typeOf: Int32Array, types: number): FaceTypes['joins'] {

@@ -124,8 +124,8 @@ function sheetFor(
       if (fits(found, boxes, area)) return smallest;
     }
   }
-  // Nine boxes of the smallest font always fit the width of the largest sheet, so only a rank of
-  // twenty or more comes here: its layers stand close, and still apart.
+  // Not reached: nine boxes always fit the width of the largest sheet, and thirty layers its height,
+  // while a poset of rank thirty has at least 3^30 faces.
   return smallest!;
 }
 
@@ -210,42 +210,82 @@ function drawJoins(
     .attr('class', 'cover-counts')
     .attr('font-size', round(numberFont))
     .attr('text-anchor', 'middle');
+  const lines = found.joins.map(({ low, high }) => ({
+    from: [centres[low][0], rectangles[low].top] as const,
+    to: [centres[high][0], rectangles[high].bottom] as const,
+  }));
   const taken = [...rectangles];
-  for (const { low, high, count } of found.joins) {
-    const [x1, y1] = [centres[low][0], rectangles[low].top];
-    const [x2, y2] = [centres[high][0], rectangles[high].bottom];
+  found.joins.forEach(({ count }, i) => {
+    const { from, to } = lines[i];
     group
       .append('line')
-      .attr('x1', round(x1))
-      .attr('y1', round(y1))
-      .attr('x2', round(x2))
-      .attr('y2', round(y2))
+      .attr('x1', round(from[0]))
+      .attr('y1', round(from[1]))
+      .attr('x2', round(to[0]))
+      .attr('y2', round(to[1]))
       .attr('stroke-width', round(0.5 + 2.2 * Math.sqrt(count / most)))
       .append('title')
       .text(`${count} covers`);
-    const width = (textWidth(`${count}`) + 0.4) * numberFont;
-    const height = 1.2 * numberFont;
-    // The first place along the line where the number hides nothing; none where all are taken.
-    for (const t of [0.5, 0.4, 0.6, 0.3, 0.7, 0.2, 0.8, 0.12, 0.88]) {
-      const [x, y] = [x1 + t * (x2 - x1), y1 + t * (y2 - y1)];
-      const place = around([x, y], width, height);
-      if (taken.some((other) => overlap(other, place))) continue;
-      taken.push(place);
-      numbers
-        .append('rect')
-        .attr('x', round(place.left))
-        .attr('y', round(place.top))
-        .attr('width', round(width))
-        .attr('height', round(height))
-        .attr('fill', page);
-      numbers
-        .append('text')
-        .attr('x', round(x))
-        .attr('y', round(y + 0.36 * numberFont))
-        .text(count);
-      break;
-    }
+    const [width, height] = [(textWidth(`${count}`) + 0.4) * numberFont, 1.2 * numberFont];
+    const others = lines.filter((_, j) => j !== i);
+    const place = freePlace(lines[i], others, taken, width, height);
+    if (place === null) return;
+    taken.push(place);
+    numbers
+      .append('rect')
+      .attr('x', round(place.left))
+      .attr('y', round(place.top))
+      .attr('width', round(width))
+      .attr('height', round(height))
+      .attr('fill', page);
+    numbers
+      .append('text')
+      .attr('x', round((place.left + place.right) / 2))
+      .attr('y', round((place.top + place.bottom) / 2 + 0.36 * numberFont))
+      .text(count);
+  });
+}
+
+interface Line {
+  readonly from: readonly [number, number];
+  readonly to: readonly [number, number];
+}
+
+/** Places for a number along a line, the middle first. */
+const placesAlong = Array.from(
+  { length: 17 },
+  (_, i) => 0.5 + (i % 2 ? 0.05 : -0.05) * ((i + 1) >> 1),
+);
+
+/**
+ * Where on a line a number stands that covers no box and no other number, and as few other lines as
+ * can be; null where all places are taken.
+ */
+function freePlace(
+  { from, to }: Line,
+  others: readonly Line[],
+  taken: readonly Rectangle[],
+  width: number,
+  height: number,
+): Rectangle | null {
+  let best: Rectangle | null = null;
+  let fewest = Number.POSITIVE_INFINITY;
+  for (const t of placesAlong) {
+    const centre = [from[0] + t * (to[0] - from[0]), from[1] + t * (to[1] - from[1])] as const;
+    const place = around(centre, width, height);
+    if (taken.some((other) => overlap(other, place))) continue;
+    const covered = others.filter((other) => meets(other, place)).length;
+    if (covered < fewest) [best, fewest] = [place, covered];
   }
+  return best;
+}
+
+/** Whether a line that rises from `from` to `to` passes through a rectangle. */
+function meets({ from, to }: Line, { left, right, top, bottom }: Rectangle): boolean {
+  const [low, high] = [Math.min(bottom, from[1]), Math.max(top, to[1])];
+  if (high > low) return false;
+  const at = (y: number) => from[0] + ((y - from[1]) / (to[1] - from[1])) * (to[0] - from[0]);
+  return Math.max(at(low), at(high)) > left && Math.min(at(low), at(high)) < right;
 }
 
 function drawBoxes(

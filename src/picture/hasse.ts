@@ -44,7 +44,7 @@ export function drawHasse(
   const selection = selectFaces(arrangement, poset, part);
   const normals = arrangement.generators.normals.length;
   const { title: given, source } = arrangement.generators;
-  const title = `Faces of ${options.title ?? given ?? source.name}`;
+  const title = `${options.title ?? given ?? source.name}: faces`;
   const idPrefix = (options.idPrefix ?? 'hasse').replace(/[^A-Za-z0-9_-]/g, '-');
   const size = `${selection.faces.length} faces, ${selection.upTargets.length} covers, rank ${poset.rank}, ${poset.hyperplanes} hyperplanes`;
   const base = { title, subtitle: `Hasse diagram of ${partWords(part)}: ${size}` };

@@ -218,7 +218,7 @@ describe('words', () => {
     for (const summary of [false, true]) {
       const text = drawHasse(arrangement, poset, { summary, idPrefix: '" onload="x' });
       const svg = parse(text);
-      expect(words(svg.title)).toBe('Faces of </title><script>alert("x")</script> & ]]>��� 浮標');
+      expect(words(svg.title)).toBe('</title><script>alert("x")</script> & ]]>��� 浮標: faces');
       expect(text).not.toContain('<script');
       expect(svg.onload).toBeUndefined();
       expect([...'\u0000\u0001\u0007'].some((character) => text.includes(character))).toBe(false);
