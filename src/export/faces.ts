@@ -1,4 +1,4 @@
-// The list of faces as CSV, NDJSON and JSON, pulled from rows or pushed as the faces stream past.
+// The list of faces as CSV, NDJSON and JSON; rows may stream past, flat by flat.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import type { FaceRow } from '../census/face-rows.js';
 import type { RowWriter } from './chunks.js';
@@ -10,7 +10,7 @@ import type { ListFormat } from './regions.js';
 /**
  * How a face becomes text. CSV has the columns `signs,dimension,zonotope_dimension,base_*,free`,
  * free generators by 1-based number, separated by blanks; the other formats as for regions, with
- * `zonotopeDimension`, `base` and `free`. For pushed rows give it to a RowSink.
+ * `zonotopeDimension`, `base` and `free`.
  */
 export function faceWriter(arrangement: Arrangement, format: ListFormat): RowWriter<FaceRow> {
   const { coordinates, radicand } = arrangement.generators;
