@@ -5,6 +5,7 @@ import { SignText } from '../bits/sign-text.js';
 import type { FacePoset } from '../face/poset.js';
 import type { FlatLattice } from '../flat/lattice.js';
 import { flatRows } from './flats.js';
+import { titleOf } from './heading.js';
 
 /** A column of the node table; `integer` ones are below 2^31, larger integers are strings. */
 export interface GraphColumn {
@@ -32,10 +33,6 @@ export interface GraphTable {
 /** The id of node i in every graph format. */
 export function nodeId(table: GraphTable, i: number): string {
   return `${table.prefix}${i + 1}`;
-}
-
-function titleOf(arrangement: Arrangement): string {
-  return arrangement.generators.title ?? arrangement.generators.source.name;
 }
 
 /** The face poset: nodes f1, f2, ... with `label` and `signs`, dimension and zonotope dimension. */

@@ -41,3 +41,9 @@ export const jsonListEnd = '\n  ]\n}\n';
 export function jsonListRow(value: unknown, index: number): string {
   return `${index === 0 ? '' : ',\n'}    ${JSON.stringify(value)}`;
 }
+
+/** What to call an arrangement in a heading: its title, or the file without its folders. */
+export function titleOf(arrangement: Arrangement): string {
+  const { title, source } = arrangement.generators;
+  return title ?? source.name.replace(/^.*[\\/](?=.)/, '');
+}

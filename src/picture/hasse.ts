@@ -1,6 +1,7 @@
 // The Hasse diagram of a face poset as an SVG page: every face while they can be read, otherwise a
 // summary by type of face that says so.
 import type { Arrangement } from '../arrangement/arrangement.js';
+import { titleOf } from '../export/heading.js';
 import type { FacePoset } from '../face/poset.js';
 import { drawFaces, layerCounts, layOutFaces } from './hasse-faces.js';
 import type { FrameWords } from './hasse-frame.js';
@@ -43,8 +44,7 @@ export function drawHasse(
   const orientation = options.orientation ?? 'landscape';
   const selection = selectFaces(arrangement, poset, part);
   const normals = arrangement.generators.normals.length;
-  const { title: given, source } = arrangement.generators;
-  const title = `${options.title ?? given ?? source.name}: faces`;
+  const title = `${options.title ?? titleOf(arrangement)}: faces`;
   const idPrefix = (options.idPrefix ?? 'hasse').replace(/[^A-Za-z0-9_-]/g, '-');
   const size = `${selection.faces.length} faces, ${selection.upTargets.length} covers, rank ${poset.rank}, ${poset.hyperplanes} hyperplanes`;
   const base = { title, subtitle: `Hasse diagram of ${partWords(part)}: ${size}` };

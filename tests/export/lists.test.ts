@@ -11,6 +11,7 @@ import { batched } from '../../src/export/chunks.js';
 import { writeFaces } from '../../src/export/faces.js';
 import { csvField, csvLabel, jsonInteger } from '../../src/export/fields.js';
 import { writeFlats } from '../../src/export/flats.js';
+import { titleOf } from '../../src/export/heading.js';
 import { writeRegions } from '../../src/export/regions.js';
 import { arrangementOf, generatorsOf } from '../support/arrangements.js';
 import { slowLattice } from '../support/slow-poset.js';
@@ -166,6 +167,20 @@ describe('flats', () => {
     expect(rows[1]).toEqual({ rank: 1, dimension: 1, normals: [1, 3], moebius: -1 });
     const whole = JSON.parse([...writeFlats(arrangement, lattice, 'json')].join(''));
     expect(whole.flats).toEqual(rows);
+  });
+});
+
+describe('titles', () => {
+  it('fall back on the name of the file, without its folders', () => {
+    const named = (name: string, title: string | null = null) =>
+      titleOf({
+        ...plane,
+        generators: { ...plane.generators, title, source: { name, sha256: null } },
+      });
+    expect(named('folder/of/normals.txt')).toBe('normals.txt');
+    expect(named('C:\\data\\normals.csv')).toBe('normals.csv');
+    expect(named('standard input')).toBe('standard input');
+    expect(named('x/y.txt', 'either/or')).toBe('either/or');
   });
 });
 
