@@ -1,13 +1,16 @@
 // The characteristic polynomial by deletion and restriction (T. Zaslavsky, 1975, Facing up to
 // Arrangements): chi(A) = t^r - sum over i of chi of H_1..H_(i-1) restricted to H_i, depth first,
 // with closed forms in ranks 1 to 3. The number of rank-3 arrangements closed is the size of the
-// coefficient of t^3. Lists no flat, no face and no region.
+// coefficient of t^3. A product of arrangements is taken part by part. Lists no flat, no face and
+// no region.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import { magnitude } from '../exact/integers.js';
+import { multiplyPolynomials } from '../exact/polynomial.js';
+import type { Ring } from '../exact/ring.js';
 import { PlainDeletion } from './deletion-plain.js';
 import { ResidueDeletion, UnluckyPrime } from './deletion-residue.js';
 import { DeletionTally } from './deletion-tally.js';
-import { inSmallCoordinates } from './own-basis.js';
+import { irreducibleParts, type Rows } from './own-basis.js';
 import { residueFieldFor } from './residue-field.js';
 
 /** How a run reports itself, and which arithmetic it may use. */
@@ -23,21 +26,35 @@ export function characteristicPolynomialByDeletion<E>(
   arrangement: Arrangement<E>,
   options: DeletionOptions = {},
 ): bigint[] {
-  const { ring, rank, hyperplanes } = arrangement;
-  const n = BigInt(hyperplanes.length);
-  if (rank === 1) return [-1n, 1n];
-  if (rank === 2) return [n - 1n, -n, 1n];
-  const given = hyperplanes.map((h) => h.essential);
-  const normals =
-    ring.radicand === null
-      ? (inSmallCoordinates(given as unknown as bigint[][]) as unknown as E[][])
-      : given;
+  const { ring, hyperplanes } = arrangement;
+  const normals = hyperplanes.map((h) => h.essential);
+  let product = [1n];
+  let closed = 0;
+  for (const part of irreducibleParts(ring, normals)) {
+    const report = (bases: number): void => options.onProgress?.(closed + bases);
+    const { polynomial, bases } = polynomialOfPart(ring, part, options, report);
+    product = multiplyPolynomials(product, polynomial);
+    closed += bases;
+  }
+  return product;
+}
+
+function polynomialOfPart<E>(
+  ring: Ring<E>,
+  normals: Rows<E>,
+  options: DeletionOptions,
+  report: (bases: number) => void,
+): { polynomial: bigint[]; bases: number } {
+  const rank = normals[0].length;
+  const n = BigInt(normals.length);
+  if (rank === 1) return { polynomial: [-1n, 1n], bases: 0 };
+  if (rank === 2) return { polynomial: [n - 1n, -n, 1n], bases: 0 };
   const plain =
     options.arithmetic === 'residues' || ring.radicand !== null
       ? null
-      : smallNumbers(normals as unknown as bigint[][]);
+      : smallNumbers(normals as unknown as Rows<bigint>);
   for (let index = 0; ; index++) {
-    const tally = new DeletionTally(rank, options.onProgress ?? null);
+    const tally = new DeletionTally(rank, report);
     const field = residueFieldFor(ring.radicand, index);
     const all = Int32Array.from(normals.keys());
     let sure: ResidueDeletion<E> | null = null;
@@ -48,7 +65,7 @@ export function characteristicPolynomialByDeletion<E>(
     try {
       if (plain === null) handOver(new Int32Array(rank), 0, all, normals.length);
       else new PlainDeletion(plain, normals.length, rank, tally, handOver).visit(0, normals.length);
-      return tally.polynomial();
+      return { polynomial: tally.polynomial(), bases: tally.bases };
     } catch (error) {
       if (!(error instanceof UnluckyPrime)) throw error;
     }
@@ -56,7 +73,7 @@ export function characteristicPolynomialByDeletion<E>(
 }
 
 /** The rows as doubles when every entry is below 2^53. */
-function smallNumbers(rows: readonly (readonly bigint[])[]): Float64Array | null {
+function smallNumbers(rows: Rows<bigint>): Float64Array | null {
   const flat = rows.flat();
   return flat.every((x) => magnitude(x) < 1n << 53n) ? Float64Array.from(flat, Number) : null;
 }

@@ -98,29 +98,33 @@ export class PlainDeletion {
 
   /** Counts the node at `depth` that has n rows. */
   visit(depth: number, n: number): void {
+    const { tally, path } = this;
+    const origin = this.origin[depth];
     if (this.rank - depth === 3) {
-      this.tally.nodes[depth]++;
       if (!this.close(depth, n)) {
-        this.tally.nodes[depth]--;
         this.handed++;
-        this.handOver(this.path, depth, this.origin[depth], n);
+        this.handOver(path, depth, origin, n);
       }
+      return;
+    }
+    if (n <= 2) {
+      tally.closeSmall(depth, n);
       return;
     }
     // Where most of what is begun has to be handed over, do it early.
     if (depth > 0 && this.handed > 256 && this.handed > this.closed) {
-      this.handOver(this.path, depth, this.origin[depth], n);
+      this.handOver(path, depth, origin, n);
       return;
     }
-    this.tally.nodes[depth]++;
+    tally.open(depth);
     for (let i = 0; i < n; i++) {
-      this.path[depth] = this.origin[depth][i];
+      path[depth] = origin[i];
       const left = this.descend(depth, i);
       if (left >= 0) {
         this.visit(depth + 1, left);
       } else {
         this.handed++;
-        this.handOver(this.path, depth + 1, this.origin[depth], i);
+        this.handOver(path, depth + 1, origin, i);
       }
     }
   }

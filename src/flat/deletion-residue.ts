@@ -4,38 +4,15 @@
 // that differ modulo p differ in truth, for the reduction is a ring homomorphism. Rows that agree
 // are taken as parallel only with a proof: the minors that have to vanish are smaller than p by
 // Hadamard's bound (over Z[sqrt(k)] their norms are), or the ring says so.
-import type { Arrangement } from '../arrangement/arrangement.js';
-import type { Quadratic } from '../exact/quadratic.js';
 import type { Ring } from '../exact/ring.js';
 import type { DeletionTally } from './deletion-tally.js';
 import { ExactSpan } from './exact-span.js';
+import { minorBounds } from './minor-bounds.js';
 import type { ResidueField } from './residue-field.js';
 
 /** The prime makes two different traces equal where that cannot be mended: take the next one. */
 export class UnluckyPrime extends Error {
   override readonly name = 'UnluckyPrime';
-}
-
-/** Log2 of a bound on |minors| (times |conjugate minors|) of k of the rows, for k = 0..r. */
-export function minorBounds<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): number[] {
-  const root = ring.radicand === null ? 0 : Math.sqrt(Number(ring.radicand));
-  // A double errs by a few parts in 2^53; 2^-20 on a logarithm is far more.
-  const logNorm = (row: readonly E[], sign: number): number => {
-    const entries = row.map((x) => {
-      if (ring.radicand === null) return Number(x as bigint);
-      const { a, b } = x as Quadratic;
-      const part = Number(b) * root * sign;
-      return Math.abs(Number(a) + part) + 2 ** -48 * (Math.abs(Number(a)) + Math.abs(part));
-    });
-    return Math.max(0, Math.log2(Math.hypot(...entries)) + 2 ** -20);
-  };
-  const logs = rows.map((row) =>
-    ring.radicand === null ? logNorm(row, 1) : logNorm(row, 1) + logNorm(row, -1),
-  );
-  logs.sort((a, b) => b - a);
-  const bounds = [0];
-  for (let k = 0; k < rows[0].length && k < logs.length; k++) bounds.push(bounds[k] + logs[k]);
-  return bounds;
 }
 
 /** One run over the essential normals `normals` of rank r >= 3, no two parallel. */
@@ -60,7 +37,7 @@ export class ResidueDeletion<E> {
   private stamp = 0;
 
   constructor(
-    ring: Arrangement<E>['ring'],
+    ring: Ring<E>,
     normals: readonly (readonly E[])[],
     rank: number,
     field: ResidueField,
@@ -124,11 +101,15 @@ export class ResidueDeletion<E> {
   }
 
   private visit(depth: number, n: number): void {
-    this.tally.nodes[depth]++;
     if (this.rank - depth === 3) {
       this.close(depth, n);
       return;
     }
+    if (n <= 2) {
+      this.tally.closeSmall(depth, n);
+      return;
+    }
+    this.tally.open(depth);
     for (let i = 0; i < n; i++) {
       this.path[depth] = this.origin[depth][i];
       this.restrict(depth, i);

@@ -4,7 +4,9 @@
 // probabilities are those that would make every descent count alike in general position.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import { wordsFor } from '../bits/signs.js';
-import { minorBounds } from './deletion-residue.js';
+import type { Ring } from '../exact/ring.js';
+import { minorBounds } from './minor-bounds.js';
+import { irreducibleParts, type Rows } from './own-basis.js';
 import { type ResidueField, residueFieldFor } from './residue-field.js';
 import { type ResidueRows, residuesOf, restrictResidues } from './residue-traces.js';
 
@@ -25,6 +27,7 @@ export interface FlatEstimate {
 
 // Seconds, measured on one core of a 2-core machine with Node 20: orders of magnitude elsewhere.
 const perBase = 2.5e-7;
+const perNode = 1.5e-7;
 const perPair = 1.3e-8;
 const perEntry = 5e-9;
 const residuesSlower = 3;
@@ -52,66 +55,90 @@ function binomial(n: number, k: number): number {
   return n < k ? 0 : product;
 }
 
-function descentsFor<E>(arrangement: Arrangement<E>): number {
-  const { rank, hyperplanes } = arrangement;
-  const entries = hyperplanes.length * rank * rank;
+function descentsFor(normals: number, rank: number): number {
+  const entries = normals * rank * rank;
   return Math.min(4000, Math.max(40, Math.ceil(entriesRead / entries)));
 }
 
 /** About how long deletion-restriction takes; deterministic, a fraction of a second. */
 export function estimateDeletion<E>(arrangement: Arrangement<E>): DeletionEstimate {
-  const { ring, rank, hyperplanes } = arrangement;
+  const { ring, hyperplanes } = arrangement;
+  const normals = hyperplanes.map((h) => h.essential);
+  let bases = 0;
+  let seconds = hyperplanes.length * 1e-6;
+  for (const part of irreducibleParts(ring, normals)) {
+    const estimate = estimatePart(ring, part);
+    bases += estimate.bases;
+    seconds += estimate.seconds;
+  }
+  return { bases: Math.round(bases), seconds };
+}
+
+function estimatePart<E>(ring: Ring<E>, normals: Rows<E>): DeletionEstimate {
+  const rank = normals[0].length;
   if (rank < 3) return { bases: 0, seconds: 0 };
   const field = residueFieldFor(ring.radicand, 0);
-  const whole = residuesOf(field, arrangement);
-  const descents = rank === 3 ? 1 : descentsFor(arrangement);
+  const whole = residuesOf(field, ring, normals);
+  const descents = rank === 3 ? 1 : descentsFor(normals.length, rank);
   const random = fractions();
   let bases = 0;
+  let nodes = 0;
   let pairs = 0;
   let entries = 0;
   for (let d = 0; d < descents; d++) {
     let node = whole;
     let weight = 1 / descents;
-    for (let picks = rank - 3; picks > 0; picks--) {
+    let picks = rank - 3;
+    for (; picks > 0; picks--) {
       const n = node.count;
+      nodes += weight;
+      if (n <= 2) break;
       // The node restricts its first i rows to row i, for every i.
       entries += (weight * n * n * node.width) / 2;
-      if (n < picks) {
-        weight = 0;
-        break;
-      }
-      // Child i leads to about C(i, picks - 1) bases: the largest of `picks` random rows has
-      // that distribution.
-      const i = largestOf(picks, n, random);
-      weight *= binomial(n, picks) / binomial(i, picks - 1);
-      node = restrictResidues(field, node, i, i);
+      // Child i has about C(i, 0) + ... + C(i, picks - 1) nodes below it.
+      const { pick, probability } = choose(
+        Array.from({ length: n }, (_, i) => subsets(i, picks - 1)),
+        random,
+      );
+      weight /= probability;
+      node = restrictResidues(field, node, pick, pick);
     }
+    if (picks > 0) continue;
     bases += weight;
     pairs += (weight * node.count * node.count) / 2;
   }
-  const slow = isPlain(arrangement, rank - 2) ? 1 : residuesSlower;
-  const seconds = slow * (bases * perBase + pairs * perPair + entries * perEntry);
-  return { bases: Math.round(bases), seconds: seconds + hyperplanes.length * 1e-6 };
+  const slow = isPlain(ring, normals, rank - 2) ? 1 : residuesSlower;
+  const seconds = slow * (bases * perBase + nodes * perNode + pairs * perPair + entries * perEntry);
+  return { bases, seconds };
 }
 
-/** The largest of k different random numbers below n. */
-function largestOf(k: number, n: number, random: () => number): number {
-  const chosen = new Set<number>();
-  // R. Floyd's sampling (1987, A sample of brilliance).
-  for (let j = n - k; j < n; j++) {
-    const x = Math.floor(random() * (j + 1));
-    chosen.add(chosen.has(x) ? j : x);
-  }
-  return Math.max(...chosen);
+/** Subsets of n things of up to k. */
+function subsets(n: number, k: number): number {
+  let sum = 0;
+  for (let e = 0; e <= k; e++) sum += binomial(n, e);
+  return sum;
+}
+
+/** One of the shares, each with the probability that is its part of the whole. */
+function choose(
+  shares: readonly number[],
+  random: () => number,
+): { pick: number; probability: number } {
+  const total = shares.reduce((a, b) => a + b, 0);
+  let at = random() * total;
+  let pick = 0;
+  while (pick < shares.length - 1 && at >= shares[pick]) at -= shares[pick++];
+  return { pick, probability: shares[pick] / total };
 }
 
 /** About how many flats there are, and what listing them takes; deterministic, a fraction of a second. */
 export function estimateFlats<E>(arrangement: Arrangement<E>): FlatEstimate {
   const { ring, rank, hyperplanes } = arrangement;
   const m = hyperplanes.length;
+  const normals = hyperplanes.map((h) => h.essential);
   const field = residueFieldFor(ring.radicand, 0);
-  const whole = residuesOf(field, arrangement);
-  const descents = rank <= 2 ? 1 : descentsFor(arrangement);
+  const whole = residuesOf(field, ring, normals);
+  const descents = rank <= 2 ? 1 : descentsFor(m, rank);
   const random = fractions();
   const sums = { flats: 1 + (rank > 1 ? 1 : 0), covers: 0, entries: 0 };
   let lowest = 0;
@@ -122,7 +149,7 @@ export function estimateFlats<E>(arrangement: Arrangement<E>): FlatEstimate {
   const flats = sums.flats + (rank > 1 ? 0 : 1);
   const words = wordsFor(m);
   let seconds = 1e-3 + covers * (perCover + perCoverWord * words);
-  if (!isPlain(arrangement, rank - 1)) seconds += sums.entries * perRingEntry;
+  if (!isPlain(ring, normals, rank - 1)) seconds += sums.entries * perRingEntry;
   // Tables grow by 1.6 and are copied then: about twice what they hold is touched at the peak.
   const bytes = flats * ((4 * words + 12) * 2 + 36) + covers * 4 * 2;
   return { flats: Math.round(flats), seconds, bytes: Math.round(bytes) };
@@ -156,18 +183,11 @@ function descendFlats(
     if (children === 0) return 0;
     if (k + 2 === rank) break;
     // A child with c siblings after it has about C(c, 0) + C(c, 1) + ... flats below it.
-    const shares: number[] = [];
-    let total = 0;
-    for (let c = children - 1; c >= 0; c--) {
-      let share = 0;
-      for (let e = 0; e <= rank - 2 - k; e++) share += binomial(c, e);
-      shares.push(share);
-      total += share;
-    }
-    let at = random() * total;
-    let pick = 0;
-    while (pick < children - 1 && at >= shares[pick]) at -= shares[pick++];
-    weight *= total / shares[pick];
+    const { pick, probability } = choose(
+      Array.from({ length: children }, (_, i) => subsets(children - 1 - i, rank - 2 - k)),
+      random,
+    );
+    weight /= probability;
     last = node.least[first + pick];
     node = restrictResidues(field, node, first + pick, n);
   }
@@ -175,13 +195,9 @@ function descendFlats(
 }
 
 /** Whether minors of k normals are likely to stay within plain doubles. */
-function isPlain<E>(arrangement: Arrangement<E>, k: number): boolean {
-  const { ring, hyperplanes } = arrangement;
+function isPlain<E>(ring: Ring<E>, normals: Rows<E>, k: number): boolean {
   if (ring.radicand !== null) return false;
-  const bounds = minorBounds(
-    ring,
-    hyperplanes.map((h) => h.essential),
-  );
+  const bounds = minorBounds(ring, normals);
   // Typical minors stay some bits below Hadamard's bound.
   return (bounds[Math.min(k, bounds.length - 1)] ?? 0) < 38;
 }

@@ -1,6 +1,6 @@
 // The traces of an arrangement on one flat, modulo a prime, by the naive elimination: enough for
 // estimates, where a rare false tie does no harm. Nothing here is proved.
-import type { Arrangement } from '../arrangement/arrangement.js';
+import type { Ring } from '../exact/ring.js';
 import type { ResidueField } from './residue-field.js';
 
 /** n rows of `width` residues, each with first non-zero entry 1, no two equal, and where they come from. */
@@ -13,12 +13,13 @@ export interface ResidueRows {
 }
 
 /** The traces on the whole space: the normals themselves. */
-export function residuesOf<E>(field: ResidueField, arrangement: Arrangement<E>): ResidueRows {
-  const { ring, rank, hyperplanes } = arrangement;
-  const rows = Float64Array.from(
-    hyperplanes.flatMap((h) => h.essential.map((x) => field.imageOf(ring, x))),
-  );
-  return distinct(field, rows, rank, Int32Array.from(hyperplanes.keys()));
+export function residuesOf<E>(
+  field: ResidueField,
+  ring: Ring<E>,
+  normals: readonly (readonly E[])[],
+): ResidueRows {
+  const rows = Float64Array.from(normals.flatMap((row) => row.map((x) => field.imageOf(ring, x))));
+  return distinct(field, rows, normals[0].length, Int32Array.from(normals.keys()));
 }
 
 /** The traces of the first n rows on the flat that row i cuts out; i itself leaves none. */

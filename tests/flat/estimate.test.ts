@@ -41,7 +41,7 @@ describe('estimates', () => {
   it('are right for normals in general position', () => {
     const rows = Array.from({ length: 30 }, (_, i) => [1, i, i * i, i ** 3, i ** 4]);
     const arrangement = arrangementOf(rows);
-    expect(estimateDeletion(arrangement).bases).toBe(435);
+    within(1.05, estimateDeletion(arrangement).bases, 435);
     within(1.05, estimateFlats(arrangement).flats, 1 + 30 + 435 + 4060 + 27405 + 1);
   });
 

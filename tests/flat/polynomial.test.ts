@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Arrangement } from '../../src/arrangement/arrangement.js';
+import { integerRoots, multiplyPolynomials } from '../../src/exact/polynomial.js';
 import { characteristicPolynomialByDeletion } from '../../src/flat/by-deletion.js';
 import { characteristicPolynomialByFlats } from '../../src/flat/by-flats.js';
 import { listFlats } from '../../src/flat/lattice.js';
@@ -101,15 +102,15 @@ describe('the characteristic polynomial', () => {
     // No choice of coordinates makes these numbers small, so each gate has to do its work.
     const size = fc.constantFrom(9n, 99n, 3000n, 10n ** 5n, 10n ** 7n, 10n ** 12n, 10n ** 25n);
     const planted = size.chain((bound) =>
-      fc.integer({ min: 3, max: 5 }).chain((r) =>
+      fc.integer({ min: 3, max: 4 }).chain((r) =>
         fc.record({
           free: fc.array(
             fc.array(fc.bigInt({ min: -bound, max: bound }), { minLength: r, maxLength: r }),
-            { minLength: 3, maxLength: 5 },
+            { minLength: r + 1, maxLength: r + 2 },
           ),
           sums: fc.array(
             fc.tuple(fc.nat(7), fc.integer({ min: -3, max: 3 }), fc.nat(7), fc.constantFrom(1, 2)),
-            { minLength: 2, maxLength: 5 },
+            { minLength: 2, maxLength: 3 },
           ),
         }),
       ),
@@ -183,47 +184,54 @@ describe('the characteristic polynomial', () => {
   it('is not misled by a prime that makes different traces equal', () => {
     const p = residueFieldFor(null, 0).p;
     const q = residueFieldFor(null, 1).p;
-    const rows: Entry[][][] = [
-      // Equal normals modulo p; lines of equal slope modulo p; equal traces on a plane modulo p.
-      [
-        [1, 0, 0],
-        [1, 1, 2],
-        [1, 1, 2 + p],
-      ],
-      [
-        [1, 0, 0],
-        [1, 1, 2],
-        [1, 2, 4 + p],
-        [0, 1, 0],
-      ],
-      [
-        [1, 0, 0],
-        [0, 1, p],
-        [0, 1, 0],
-        [0, 1, 1],
-      ],
-      [
-        [1, 0, 0, 0],
-        [1, 1, 2, 3],
-        [2, 1, 2, 3 + p],
-        [0, 0, 1, 0],
-      ],
-      [
-        [1, 0, 0, 0],
-        [1, 1, 2, 3],
-        [2, 1, 2, BigInt(p) * BigInt(q) + 3n],
-        [0, 0, 1, 0],
-      ],
-      [
-        [p, 0, 0],
-        [0, p, 1],
-        [p, p, 0],
-      ],
+    // The unit vectors come first, so that the numbers are used as they stand.
+    const unit = (d: number) =>
+      Array.from({ length: d }, (_, i) => Array.from({ length: d }, (_, j) => (i === j ? 1 : 0)));
+    const lists: Entry[][] = [
+      // Equal normals modulo p; lines of equal slope modulo p; the same through points at infinity.
+      [...unit(3), [1, 1, 2], [1, 1, 2 + p]],
+      [...unit(3), [1, 1, 2], [1, 2, 4 + p], [1, 0, 0]],
+      [...unit(3), [0, 1, p], [0, 1, 1], [1, 1, 1]],
+      [...unit(3), [p, 0, 1], [0, p, 1], [p, p, 1]],
+      [...unit(3), [1, 2, 3], [2, 3, 3 + p], [1, 1, 0]],
+      // Equal traces on a hyperplane modulo p, and modulo two primes at once.
+      [...unit(4), [1, 1, 2, 3], [2, 1, 2, 3 + p], [1, 0, 0, 1]],
+      [...unit(4), [1, 1, 2, 3], [2, 1, 2, BigInt(p) * BigInt(q) + 3n], [1, 0, 0, 1]],
     ];
-    for (const list of rows) {
+    for (const list of lists) {
       const arrangement = arrangementOf(list);
       expectPolynomial(arrangement, slowPolynomial(arrangement));
     }
+  });
+
+  it('of a product is the product of the polynomials', () => {
+    fc.assert(
+      fc.property(
+        smallRows({ dimension: 3, maximum: 6 }),
+        smallRows({ dimension: 2, maximum: 4 }),
+        smallRows({ dimension: 4, maximum: 7 }),
+        fc.nat(),
+        (a, b, c, seed) => {
+          const rows = [
+            ...a.map((row) => [...row, 0, 0, 0, 0, 0, 0]),
+            ...b.map((row) => [0, 0, 0, ...row, 0, 0, 0, 0]),
+            ...c.map((row) => [0, 0, 0, 0, 0, ...row]),
+          ];
+          const mixed = unimodularChange(shuffled(rows, seed), { seed, steps: 12, factor: 3 });
+          const expected = [a, b, c]
+            .map((part) => slowPolynomial(arrangementOf(part)))
+            .reduce(multiplyPolynomials);
+          expectPolynomial(arrangementOf(mixed), expected);
+        },
+      ),
+      { numRuns: 15 },
+    );
+    // Twenty-five coordinate hyperplanes: (t - 1)^25 without 2^25 steps.
+    const boolean = Array.from({ length: 25 }, (_, i) =>
+      Array.from({ length: 25 }, (_, j) => (i === j ? 1 : 0)),
+    );
+    const chi = characteristicPolynomialByDeletion(arrangementOf(boolean));
+    expect(integerRoots(chi)).toEqual([{ root: 1n, multiplicity: 25 }]);
   });
 
   it('vanishes at 1, is monic, and starts with the number of hyperplanes', () => {
