@@ -7,18 +7,17 @@ import {
   addNumbers,
   divideNumbers,
   type ExactNumber,
-  equalNumbers,
   exactNumber,
   exactOne,
   exactZero,
-  formatNumber,
   isZero,
   multiplyNumbers,
   negateNumber,
 } from '../exact/number.js';
 import type { RegionTable } from '../region/regions.js';
-import { negatedWord } from '../region/walls.js';
+import { eachRegion } from '../region/walls.js';
 import { type Placement, ZonotopeVertices } from '../zonotope/vertices.js';
+import { minus, minusNumber, plus, type Vector } from './crosscheck-placement.js';
 import { type PointSet, pointKey, pointOfKey, signOfNumber } from './crosscheck-points.js';
 
 /** Their points looked at when candidates are scored. */
@@ -27,20 +26,6 @@ const SAMPLE = 64;
 const VOTE_VERTICES = 100_000;
 /** Their points compared in pairs when differences vote. */
 const VOTE_POINTS = 1_000;
-
-type Vector = readonly ExactNumber[];
-
-/** Calls `visit` with the sign word of every region: the half table, then the negations. */
-export function eachRegion(
-  table: RegionTable,
-  visit: (words: Int32Array, offset: number, region: number) => void,
-): void {
-  const { words, rows, wordsPerRow } = table.half;
-  for (let row = 0; row < rows; row++) visit(words, row * wordsPerRow, row);
-  for (let row = 0; row < rows; row++) {
-    visit(negatedWord(words, row * wordsPerRow, table.hyperplanes), 0, rows + row);
-  }
-}
 
 /** A placement and how many of the sampled points it explains. */
 export interface FoundPlacement {
@@ -265,57 +250,4 @@ class Votes<T> {
     votes.sort((a, b) => b.count - a.count);
     return votes.slice(0, limit).map(({ value }) => value);
   }
-}
-
-function minusNumber(x: ExactNumber, y: ExactNumber): ExactNumber {
-  return addNumbers(x, negateNumber(y));
-}
-
-function minus(v: Vector, w: Vector): ExactNumber[] {
-  return v.map((x, j) => minusNumber(x, w[j]));
-}
-
-function plus(v: Vector, w: Vector): ExactNumber[] {
-  return v.map((x, j) => addNumbers(x, w[j]));
-}
-
-/** The point of theirs taken back to our coordinates. */
-export function takenBack(point: Vector, { scale, shift, radicand }: Placement): ExactNumber[] {
-  return minus(point, shift).map((x) => divideNumbers(x, scale, radicand ?? 0n));
-}
-
-/** The placement in words: `2 v - (3, 3, 4)`, with its usual name where it has one. */
-export function describePlacement(arrangement: Arrangement, placement: Placement): string {
-  const { scale, shift, radicand } = placement;
-  const { normals, ranges } = arrangement.generators;
-  const k = radicand ?? 0n;
-  if (equalNumbers(scale, exactOne) && shift.every(isZero)) return 'as ours';
-  // Twice the centre: the sum of (low + high) u over the generators.
-  let ends = shift.map(() => exactZero);
-  normals.forEach((normal, i) => {
-    const sum = addNumbers(ranges?.[i].low ?? exactZero, ranges?.[i].high ?? exactOne);
-    ends = ends.map((x, j) => addNumbers(x, multiplyNumbers(sum, normal[j], k)));
-  });
-  const centred = shift.every((t, j) =>
-    isZero(addNumbers(addNumbers(t, t), multiplyNumbers(scale, ends[j], k))),
-  );
-  const sized = equalNumbers(scale, exactOne)
-    ? 'v'
-    : `${factorText(formatNumber(scale, radicand))} v`;
-  const moved = shift.every(isZero)
-    ? ''
-    : ` + (${shift.map((x) => formatNumber(x, radicand)).join(', ')})`;
-  const doubled = equalNumbers(scale, exactNumber(2n)) && ranges === null;
-  const name = !centred
-    ? ''
-    : doubled
-      ? ' (centred, segments from -1 to 1)'
-      : ranges === null && equalNumbers(scale, exactOne)
-        ? ' (centred, segments from -1/2 to 1/2)'
-        : ' (centred)';
-  return `${sized}${moved} for each vertex v of ours${name}`;
-}
-
-function factorText(text: string): string {
-  return /^[0-9/]+$/.test(text) ? text : `(${text})`;
 }

@@ -76,7 +76,9 @@ export class PointSet {
     point.forEach((x, j) => {
       if (this.first.size === 1 || this.isLess(x, this.low[j])) this.low[j] = x;
       if (this.first.size === 1 || this.isLess(this.high[j], x)) this.high[j] = x;
-      this.sum[j] = addNumbers(this.sum[j], x);
+      const sum = this.sum[j];
+      const isWhole = sum.d === 1n && x.d === 1n && sum.b === 0n && x.b === 0n;
+      this.sum[j] = isWhole ? { a: sum.a + x.a, b: 0n, d: 1n } : addNumbers(sum, x);
     });
   }
 

@@ -30,7 +30,7 @@ export interface ListReport {
   /** Regions of ours, and rows of theirs. */
   readonly ours: number;
   readonly theirs: number;
-  /** How their vertices lie to ours, in words; null for signs. */
+  /** How their vertices lie to ours, in words: scale and shift; null for signs. */
   readonly placement: string | null;
   readonly counts: {
     readonly matched: number;
@@ -107,7 +107,7 @@ function listLines(part: ListReport, rows: number): string[] {
   const width = Math.max(...table.map(([, count]) => String(count).length));
   const lines = [
     what,
-    ...(part.placement === null ? [] : wrapped(`theirs are ${part.placement}`)),
+    ...(part.placement === null ? [] : wrapped(`placement: ${part.placement}`)),
     ...table.map(([name, count]) => `  ${name.padEnd(12)}  ${String(count).padStart(width)}`),
   ];
   const section = <T>(

@@ -7,8 +7,7 @@ import { Disagreement } from '../errors.js';
 import { InteriorPoints } from '../region/interior.js';
 import { conePoint } from '../region/interior-exact.js';
 import type { RegionTable } from '../region/regions.js';
-import { RegionIndex } from '../region/walls.js';
-import { eachRegion } from './crosscheck-place.js';
+import { eachRegion, RegionIndex } from '../region/walls.js';
 import type { SignList } from './crosscheck-read.js';
 import type { ExtraRow, ListReport, MissingRegion, RepeatedRow } from './crosscheck-report.js';
 

@@ -5,9 +5,11 @@ import { SignText } from '../bits/sign-text.js';
 import { type ExactNumber, formatNumber } from '../exact/number.js';
 import { InteriorPoints } from '../region/interior.js';
 import type { RegionTable } from '../region/regions.js';
+import { eachRegion } from '../region/walls.js';
 import { ZonotopeMembership } from '../zonotope/membership.js';
 import { ZonotopeVertices } from '../zonotope/vertices.js';
-import { describePlacement, eachRegion, findPlacement, takenBack } from './crosscheck-place.js';
+import { findPlacement } from './crosscheck-place.js';
+import { describePlacement, takenBack } from './crosscheck-placement.js';
 import { type PointSet, pointKey, pointOfKey } from './crosscheck-points.js';
 import type { ExtraRow, ListReport, MissingRegion, RepeatedRow } from './crosscheck-report.js';
 
@@ -77,7 +79,7 @@ export function crosscheckVertices(
     theirs: theirs.rows,
     placement:
       matched === 0
-        ? 'not ours: no scale and shift takes vertices of ours to theirs'
+        ? 'none: no scale and shift takes a vertex of ours to one of theirs; numbers are taken exactly as written, so rounded ones match nothing'
         : describePlacement(arrangement, placement),
     counts: {
       matched,

@@ -137,6 +137,18 @@ export function negatedWord(words: Int32Array, offset: number, hyperplanes: numb
   return negated;
 }
 
+/** Calls `visit` with the sign word of every region: the half table, then the negations. */
+export function eachRegion(
+  table: RegionTable,
+  visit: (words: Int32Array, offset: number, region: number) => void,
+): void {
+  const { words, rows, wordsPerRow } = table.half;
+  for (let row = 0; row < rows; row++) visit(words, row * wordsPerRow, row);
+  for (let row = 0; row < rows; row++) {
+    visit(negatedWord(words, row * wordsPerRow, table.hyperplanes), 0, rows + row);
+  }
+}
+
 /** Walls of the regions of a complete half table. */
 export class WallFinder extends RegionIndex {
   /** The row asked about, one bit flipped at a time. */

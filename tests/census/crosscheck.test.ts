@@ -97,21 +97,21 @@ describe('a list of vertices', () => {
     const total = cube.reduce((sum, row) => sum.map((x, j) => x + row[j]), [0, 0, 0]);
     const said = async (list: (number | string)[][]): Promise<string | null> =>
       (await checkPart(cubeArrangement, csv(list))).placement;
-    expect(await said(cubeVertices)).toBe('as ours');
+    expect(await said(cubeVertices)).toBe('same place and scale as ours');
     expect(await said(cubeVertices.map((v) => v.map((x, j) => 2 * x - total[j])))).toBe(
-      '2 v + (-4, -4, -4) for each vertex v of ours (centred, segments from -1 to 1)',
+      'theirs = 2 v + (-4, -4, -4) for each vertex v of ours (centred, segments from -1 to 1)',
     );
     expect(await said(cubeVertices.map((v) => v.map((x, j) => x - total[j] / 2)))).toBe(
-      'v + (-2, -2, -2) for each vertex v of ours (centred, segments from -1/2 to 1/2)',
+      'theirs = v + (-2, -2, -2) for each vertex v of ours (centred, segments from -1/2 to 1/2)',
     );
     expect(await said(cubeVertices.map((v) => v.map((x) => `${x}/3`)))).toBe(
-      '1/3 v for each vertex v of ours',
+      'theirs = 1/3 v for each vertex v of ours',
     );
     expect(await said(cubeVertices.map((v) => v.map((x) => (x + 5).toFixed(2))))).toBe(
-      'v + (5, 5, 5) for each vertex v of ours',
+      'theirs = v + (5, 5, 5) for each vertex v of ours',
     );
     expect(await said(cubeVertices.map((v) => v.map((x) => `${x}*sqrt(2)`)))).toBe(
-      '(sqrt(2)) v for each vertex v of ours',
+      'theirs = (sqrt(2)) v for each vertex v of ours',
     );
   });
 
@@ -123,7 +123,7 @@ describe('a list of vertices', () => {
     const { parts, agrees } = await check(cubeArrangement, text);
     expect(agrees).toBe(false);
     const part = parts[0] as ListReport;
-    expect(part.placement).toBe('2 v + (1, 1, 1) for each vertex v of ours');
+    expect(part.placement).toBe('theirs = 2 v + (1, 1, 1) for each vertex v of ours');
     expect(part.counts).toEqual({
       matched: 31,
       missing: 1,
@@ -167,7 +167,7 @@ describe('a list of vertices', () => {
     }
     const kept = list.filter((_, i) => !outer.has(i));
     const part = await checkPart(arrangement, csv([...kept, [1000, 0, 0], [0, -900, 1]]));
-    expect(part.placement).toBe('3 v + (7, -5, 2) for each vertex v of ours');
+    expect(part.placement).toBe('theirs = 3 v + (7, -5, 2) for each vertex v of ours');
     expect(part.counts).toMatchObject({ matched: kept.length, missing: outer.size, extra: 2 });
   });
 
@@ -216,7 +216,7 @@ describe('a list of vertices', () => {
       { ranges },
     );
     const part = await checkPart(arrangement, '-1,2\n1,2\n-1,4\n1,4\n');
-    expect(part).toMatchObject({ agrees: true, placement: 'as ours' });
+    expect(part).toMatchObject({ agrees: true, placement: 'same place and scale as ours' });
   });
 
   it('is read with a header, labels, blanks or semicolons, and by our own column names', async () => {
