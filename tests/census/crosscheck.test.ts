@@ -219,6 +219,24 @@ describe('a list of vertices', () => {
     expect(part).toMatchObject({ agrees: true, placement: 'same place and scale as ours' });
   });
 
+  it('takes numbers of a quadratic field, and tells rounded ones from exact ones', async () => {
+    // A rhombus: u = (2, 0) and v = (0, 1 + sqrt(5)), corners 0, u, v, u + v.
+    const arrangement = arrangementOf([
+      [2, 0],
+      [0, [1, 1]],
+    ]);
+    const exact = '0,0\n2,0\n0,1+sqrt(5)\n2,(2+2*sqrt(5))/2\n';
+    expect(await checkPart(arrangement, exact)).toMatchObject({ agrees: true });
+    const centred = '-1,-(1+sqrt(5))/2\n1,-(1+sqrt(5))/2\n-1,(1+sqrt(5))/2\n1,(1+sqrt(5))/2\n';
+    const part = await checkPart(arrangement, centred);
+    expect(part.agrees).toBe(true);
+    expect(part.placement).toMatch(/centred/);
+    const rounded = await checkPart(arrangement, '0,0\n2,0\n0,3.236\n2,3.236\n');
+    expect(rounded.counts).toMatchObject({ matched: 2, missing: 2, notExtreme: 2, extra: 0 });
+    const above = await checkPart(arrangement, '0,0\n2,0\n0,3.2361\n2,3.2361\n');
+    expect(above.counts).toMatchObject({ matched: 2, missing: 2, notExtreme: 0, extra: 2 });
+  });
+
   it('is read with a header, labels, blanks or semicolons, and by our own column names', async () => {
     const lines = cubeVertices.map((v) => v.join(' '));
     const agree = async (text: string): Promise<void> => {

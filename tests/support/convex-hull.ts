@@ -32,6 +32,25 @@ export function hullCorners(points: readonly Point[]): number[] {
   return [...normals].filter(([, list]) => spanSpace(list)).map(([i]) => i);
 }
 
+/** Number of facets: distinct outward directions of the package's faces; points as above. */
+export function hullFacets(points: readonly Point[]): number {
+  const directions = new Set<string>();
+  for (const face of quickhull(points.map(([x, y, z]) => [x, y, z]))) {
+    const [p, q, r] = face.map((i) => points[i]);
+    const normal = cross(
+      q.map((x, j) => x - p[j]),
+      r.map((x, j) => x - p[j]),
+    );
+    const divisor = normal.reduce(gcd, 0);
+    directions.add(normal.map((x) => x / divisor).join(' '));
+  }
+  return directions.size;
+}
+
+function gcd(a: number, b: number): number {
+  return b === 0 ? Math.abs(a) : gcd(b, a % b);
+}
+
 function spanSpace(vectors: readonly Point[]): boolean {
   return vectors.some((u) => vectors.some((v) => vectors.some((w) => dot(u, cross(v, w)) !== 0)));
 }
