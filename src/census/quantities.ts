@@ -27,7 +27,7 @@ export function formatBytes(bytes: number): string {
     value /= 1024;
     unit++;
   }
-  return Number.isFinite(value) ? `${twoDigits(value)} ${binaryUnits[unit]}` : 'no machine has';
+  return value < 1e6 ? `${twoDigits(value)} ${binaryUnits[unit]}` : 'more than a million PB';
 }
 
 /** Digits in groups of three, for counts in sentences. */

@@ -135,7 +135,8 @@ export function runRoutes(
 function needed(need: Need, limits: RouteLimits): string {
   const memory = need.bytes > 0 ? ` and ${formatBytes(need.bytes)}` : '';
   const what = `would need about ${formatSeconds(need.seconds)}${memory}`;
-  if (!Number.isFinite(need.seconds) || !Number.isFinite(need.bytes)) return what;
+  // Beyond a thousand years or a petabyte no option will do.
+  if (need.seconds > 3e10 || need.bytes > 1024 ** 5) return what;
   const options: string[] = [];
   if (need.seconds > limits.secondsPerRoute) {
     options.push(`--budget ${roundUp(need.seconds * 1.2)}`);

@@ -1,6 +1,9 @@
 // `crosscheck`: somebody else's list, or number, held against ours.
 import type { Command } from 'commander';
+import type { Arrangement } from '../arrangement/arrangement.js';
+import type { CrosscheckReport } from '../census/crosscheck-report.js';
 import { Disagreement, InputError } from '../errors.js';
+import { jsonText } from './json.js';
 import { loadArrangement, readBytes } from './load.js';
 import {
   addCommonOptions,
@@ -10,7 +13,7 @@ import {
   readInteger,
 } from './options.js';
 import { writeTo } from './output.js';
-import { startProgress } from './progress.js';
+import { type Progress, startProgress } from './progress.js';
 
 const formats = ['text', 'json'];
 
@@ -60,6 +63,53 @@ async function run(
     throw new InputError('crosscheck: - is given twice', 'standard input can be one of the two');
   }
   const arrangement = await loadArrangement(name);
-  const bytes = file === undefined ? null : await readBytes(file);
-  void [arrangement, bytes, format, memoryOf, writeTo, startProgress, Disagreement];
+  const progress = await startProgress(options.quiet);
+  let report: CrosscheckReport;
+  try {
+    report =
+      options.regions === undefined
+        ? await checkList(arrangement, file!, memoryOf(options), progress)
+        : await checkCount(arrangement, options.regions, memoryOf(options), progress);
+  } finally {
+    progress.end();
+  }
+  const { crosscheckLines } = await import('../census/crosscheck-report.js');
+  const text =
+    format === 'json'
+      ? jsonText({ schema: 'signwright/crosscheck/1', ...report })
+      : `${crosscheckLines(report).join('\n')}\n`;
+  await writeTo(options.out ?? null, (result) => result.write(text));
+  if (!report.agrees) {
+    throw new Disagreement(`${file ?? `${options.regions} regions`}: does not agree with ours`);
+  }
+}
+
+async function checkList(
+  arrangement: Arrangement,
+  file: string,
+  memoryBytes: number,
+  progress: Progress,
+): Promise<CrosscheckReport> {
+  const bytes = await readBytes(file);
+  const [{ readTheirList }, { crosscheckList }, { listChecked }] = await Promise.all([
+    import('../census/crosscheck-read.js'),
+    import('../census/crosscheck.js'),
+    import('../census/listing.js'),
+  ]);
+  const theirs = await readTheirList(bytes, file, arrangement);
+  return crosscheckList(arrangement, listChecked(arrangement, memoryBytes, progress), theirs);
+}
+
+async function checkCount(
+  arrangement: Arrangement,
+  regions: bigint,
+  memoryBytes: number,
+  progress: Progress,
+): Promise<CrosscheckReport> {
+  const [{ polynomialBy }, { crosscheckCount }] = await Promise.all([
+    import('../census/polynomial.js'),
+    import('../census/crosscheck.js'),
+  ]);
+  const ours = polynomialBy(arrangement, null, memoryBytes, progress).regions;
+  return crosscheckCount(ours, regions);
 }
