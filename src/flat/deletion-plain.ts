@@ -6,10 +6,10 @@
 // (a b - c d) / pivot is known to be one before it is computed. With M a bound on the entries:
 //  - M <= 2^26: a b and c d are at most 2^52, their difference at most 2^53: all exact, and the
 //    correctly rounded quotient of two integers that divide is exact.
-//  - M^2 <= 2^48 |pivot|: the products err by at most 2^-53 M^2 each and their difference by
-//    2^-52 M^2 more, together at most 2^-51 (1 + 2^-50) M^2, so by less than 0.13 after the
-//    division; the quotient is at most 2^49, which the division rounds by at most 2^-4. The sum is
-//    below 1/2 and rounding to the nearest integer is exact.
+//  - M^2 <= 2^48 |pivot|, in the closed form only: the products err by at most 2^-53 M^2 each and
+//    their difference by 2^-52 M^2 more, together at most 2^-51 (1 + 2^-50) M^2, so by less than
+//    0.13 after the division; the quotient is at most 2^49, which the division rounds by at most
+//    2^-4. The sum is below 1/2 and rounding to the nearest integer is exact.
 //  - otherwise the node is handed over to `handOver`.
 // Two rows are parallel exactly when their entries over the first non-zero one agree. Correctly
 // rounded division is monotone, so doubles that differ prove ratios that differ. Doubles that agree
@@ -168,8 +168,8 @@ export class PlainDeletion {
     const pivot = rows[pivotRow + column];
     const divisor = this.divisor[depth];
     const bound = this.bound[depth];
-    const rounds = bound > EXACT_RATIOS;
-    if (rounds && bound * bound > ROUNDED_QUOTIENTS * Math.abs(divisor)) return -1;
+    // Larger ones would be too large for the closed form anyway.
+    if (bound > EXACT_RATIOS) return -1;
     const divides = divisor !== 1 && divisor !== -1;
     const stamp = this.nextStamp();
     let left = 0;
@@ -184,10 +184,7 @@ export class PlainDeletion {
       for (let x = 0; x < s; x++) {
         if (x === column) continue;
         let y = pivot * rows[row + x] - factor * rows[pivotRow + x];
-        if (divides) {
-          y /= divisor;
-          if (rounds) y = y + ROUNDER - ROUNDER;
-        }
+        if (divides) y /= divisor;
         out[write] = y;
         if (y !== 0) {
           if (lead === 0) lead = y;

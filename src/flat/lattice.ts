@@ -110,7 +110,7 @@ class LatticeBuilder<E> {
     const end = rankOffsets[k + 1];
     const index = new FlatIndex(flats, end);
     for (let flat = first; flat < end; flat++) {
-      if (((flat - first) & 0x3fff) === 0x3fff) {
+      if (((flat - first) & 0xfff) === 0xfff) {
         onProgress?.({ rank: k, done: flat - first, of: end - first, flats: flats.rows });
       }
       this.moveTo(k, flat);

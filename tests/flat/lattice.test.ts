@@ -152,7 +152,7 @@ describe('flats', () => {
   });
 
   it('report their progress', () => {
-    const rows = Array.from({ length: 40 }, (_, i) => [1, i, i * i, i ** 3, i ** 4]);
+    const rows = Array.from({ length: 31 }, (_, i) => [1, i, i * i, i ** 3, i ** 4]);
     const seen: number[] = [];
     const lattice = listFlats(arrangementOf(rows), {
       onProgress: ({ flats, done, of }) => {
@@ -162,7 +162,8 @@ describe('flats', () => {
     });
     expect(seen.every((flats, i) => i === 0 || flats >= seen[i - 1])).toBe(true);
     // Moment curve: in general position, so every subset below the rank is a flat.
-    expect(lattice.flatCount).toBe(1 + 40 + 780 + 9880 + 91390 + 1);
+    expect(lattice.flatCount).toBe(1 + 31 + 465 + 4495 + 31_465 + 1);
+    expect(seen.length).toBeGreaterThan(0);
   });
 });
 
