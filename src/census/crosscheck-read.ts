@@ -105,7 +105,9 @@ class ListReader {
   private async eachRow(take: (row: Row) => void): Promise<void> {
     const { text } = this.source;
     const first = /^\s*(?:#[^\r\n]*\s+)*([^\r\n]*)/.exec(text)![1];
-    const found = [',', ';', '\t'].find((mark) => first.includes(mark));
+    // A quoted cell may hold line breaks: then the first line alone does not tell.
+    const seen = text.includes('"') ? text : first;
+    const found = [',', ';', '\t'].find((mark) => seen.includes(mark));
     this.delimiter = found ?? ' ';
     if (found === undefined && !text.includes('"')) {
       let line = 0;
@@ -134,7 +136,12 @@ class ListReader {
     } catch (error) {
       if (!(error instanceof CsvError)) throw error;
       const line = Number((error as { lines?: number }).lines ?? 1);
-      throw this.fault(line, 0, 'a cell in quotes is not closed or not read', 'mend the quotes');
+      throw this.fault(
+        line,
+        0,
+        'a quote is not closed, or text stands beside a cell in quotes',
+        'put the whole cell in quotes, or none of it',
+      );
     }
   }
 

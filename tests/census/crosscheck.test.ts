@@ -242,6 +242,7 @@ describe('a list of vertices', () => {
     const agree = async (text: string): Promise<void> => {
       expect((await check(cubeArrangement, text)).agrees).toBe(true);
     };
+    await agree(`"x\ny",z,u\n${cubeVertices.join('\n')}`);
     await agree(`# ours\n${lines.join('\r\n')}\n`);
     await agree(`x;y;z\n${cubeVertices.map((v) => v.join(';')).join('\n')}`);
     await agree(`name,x,y,z\n${cubeVertices.map((v, i) => `"v, ${i}",${v}`).join('\n')}`);
