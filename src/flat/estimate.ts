@@ -31,9 +31,10 @@ const perNode = 1.5e-7;
 const perPair = 1.3e-8;
 const perEntry = 5e-9;
 const residuesSlower = 3;
-const perCover = 2.2e-7;
-const perCoverWord = 5e-8;
-const perRingEntry = 1.2e-6;
+const perCover = 3.5e-7;
+const perCoverWord = 1.5e-8;
+const perIntegerEntry = 2e-6;
+const perRootEntry = 1.2e-5;
 
 /** Entries of rows that the descents of one estimate may read: about a fifth of a second. */
 const entriesRead = 3_000_000;
@@ -149,7 +150,9 @@ export function estimateFlats<E>(arrangement: Arrangement<E>): FlatEstimate {
   const flats = sums.flats + (rank > 1 ? 0 : 1);
   const words = wordsFor(m);
   let seconds = 1e-3 + covers * (perCover + perCoverWord * words);
-  if (!isPlain(ring, normals, rank - 1)) seconds += sums.entries * perRingEntry;
+  if (!isPlain(ring, normals, rank - 1)) {
+    seconds += sums.entries * (ring.radicand === null ? perIntegerEntry : perRootEntry);
+  }
   // Tables grow by 1.6 and are copied then: about twice what they hold is touched at the peak.
   const bytes = flats * ((4 * words + 12) * 2 + 36) + covers * 4 * 2;
   return { flats: Math.round(flats), seconds, bytes: Math.round(bytes) };
