@@ -12,7 +12,7 @@ import { type ResidueRows, residuesOf, restrictResidues } from './residue-traces
 
 /** The cost of characteristicPolynomialByDeletion. */
 export interface DeletionEstimate {
-  /** Rank-3 arrangements to close: the size of the coefficient of t^3. */
+  /** Rank-3 arrangements to close: for an irreducible one at most the size of the coefficient of t^3. */
   readonly bases: number;
   readonly seconds: number;
 }
