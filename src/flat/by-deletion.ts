@@ -1,9 +1,9 @@
 // The characteristic polynomial by deletion and restriction (T. Zaslavsky, 1975, Facing up to
 // Arrangements): chi(A) = t^r - sum over i of chi of H_1..H_(i-1) restricted to H_i, depth first,
-// with closed forms in ranks 1 to 3. The rank-3 arrangements closed are at most as many as the size
-// of the coefficient of t^3. The order of the hyperplanes is kept: reversed, shuffled, by weight or
-// by coordinates it took 0.8 to 1.3 times as long, and none was best throughout. A product of arrangements is taken part by part. Lists no flat, no face and
-// no region.
+// with closed forms in ranks 1 to 3; a product of arrangements part by part. The rank-3 arrangements
+// closed are at most as many as the size of the coefficient of t^3. Lists no flat, face or region.
+// The order of the hyperplanes is kept: reversed, shuffled, by weight or by coordinates took 0.8 to
+// 1.3 times as long, and none was best throughout.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import { magnitude } from '../exact/integers.js';
 import { multiplyPolynomials } from '../exact/polynomial.js';
