@@ -1,13 +1,14 @@
 // The order in which the lines of a flat of dimension 3 cross one of them (in dimension 2: the
 // order of the points on it). In the chart where coordinate 0 is 1, class c is the line
 // a0 + ap xp + aq xq = 0; along it, by s = xq, class k has the value x + y s and changes side at
-// s = -x/y.
+// s = -x/y. Only the crossings with active classes are sorted; an inactive class is noted at the
+// first of them that it does not come after.
 //
 // Correctly rounded division is monotone: of two exact integer fractions, different doubles are
 // already in their true order, and only equal doubles can hide a difference; none hides when
 // |x|, |y| <= 2^26, since two such fractions then differ by more than 2^-52 of themselves. x and y
 // are exact by the same two gates as in restriction.ts (rounded quotients reach 2^50 here, and err by
-// at most 2^-2 + 2^-3); otherwise the ring decides.
+// at most 2^-2 + 2^-3); otherwise, or when a difference hides, the ring decides.
 import type { Ring } from '../exact/ring.js';
 import type { FlatLevel } from './level.js';
 import { productsEqual } from './restriction.js';
@@ -21,16 +22,19 @@ const RUN = 12;
 /** The crossings along one line; n classes at most, scratch reused between calls. */
 export class Crossings {
   readonly ring: Ring<unknown>;
-  /** Classes in the order of their crossings, `count` of them. */
+  /** Active classes in the order of their crossings, `count` of them. */
   order: Int32Array;
   /** Position of each crossing along the line: ascending, equal exactly where they coincide. */
   position: Float64Array;
   count = 0;
-  /** Per class: 1 where the start of the line lies on the positive side of it, 0 on the negative. */
+  /** Per class other than c: 1 where the start of the line lies on its positive side, else 0. */
   readonly startsPositive: Uint8Array;
-  /** Classes that never cross it (parallel in the chart), `parallelCount` of them. */
-  readonly parallel: Int32Array;
-  parallelCount = 0;
+  /**
+   * For crossing i the inactive classes to be crossed before it is over and after crossing i - 1:
+   * `firstWaiting[i]`, then `nextWaiting[k]` after k, until -1.
+   */
+  readonly firstWaiting: Int32Array;
+  readonly nextWaiting: Int32Array;
   readonly #x: Float64Array;
   readonly #y: Float64Array;
   #spareOrder: Int32Array;
@@ -41,98 +45,101 @@ export class Crossings {
     this.order = new Int32Array(hyperplanes);
     this.position = new Float64Array(hyperplanes);
     this.startsPositive = new Uint8Array(hyperplanes);
-    this.parallel = new Int32Array(hyperplanes);
+    this.firstWaiting = new Int32Array(hyperplanes);
+    this.nextWaiting = new Int32Array(hyperplanes);
     this.#x = new Float64Array(hyperplanes);
     this.#y = new Float64Array(hyperplanes);
     this.#spareOrder = new Int32Array(hyperplanes);
     this.#sparePosition = new Float64Array(hyperplanes);
   }
 
-  /** Crossings of the other classes (class 0, at infinity, left out) along class c >= 1 of a level 3. */
-  alongLine(level: FlatLevel, c: number): void {
-    if (level.plain) {
-      const B = level.largest;
-      if (B <= DIRECT_LIMIT) {
-        this.#plainLine(level, c, 0);
-        this.#sort();
-        if (2 * B * B > TIE_FREE_LIMIT) this.#settleTies();
-        return;
-      }
-      if (B * B <= ROUNDED_FACTOR * level.pivot) {
-        this.#plainLine(level, c, level.pivot);
-        this.#sort();
-        this.#settleTies();
-        return;
-      }
+  /** Along class c >= 1 of a level 3; classes 1 to active - 1 are active, class 0 lies at infinity. */
+  alongLine(level: FlatLevel, c: number, active: number): void {
+    const B = level.largest;
+    if (level.plain && (B <= DIRECT_LIMIT || B * B <= ROUNDED_FACTOR * level.pivot)) {
+      const direct = B <= DIRECT_LIMIT;
+      this.#takeLine(level, c, active, direct ? 0 : level.pivot);
+      if ((direct && 2 * B * B <= TIE_FREE_LIMIT) || this.#nothingHides()) return;
     }
-    const rows = level.elementRows(this.ring);
+    const { ring } = this;
+    const rows = level.elementRows(ring);
     const own = rows[c];
-    const ring = this.ring;
-    let p = 2;
-    if (ring.sign(own[2]) === 0) p = 1;
+    const p = ring.sign(own[2]) === 0 ? 1 : 2;
     const q = 3 - p;
     const flipped = ring.sign(own[p]) < 0;
     const pivot = flipped ? ring.negate(own[p]) : own[p];
     const x: unknown[] = [];
     const y: unknown[] = [];
-    for (let k = 0; k < rows.length; k++) {
-      const factor = flipped ? ring.negate(rows[k][p]) : rows[k][p];
-      x.push(ring.subtract(ring.multiply(pivot, rows[k][0]), ring.multiply(factor, own[0])));
-      y.push(ring.subtract(ring.multiply(pivot, rows[k][q]), ring.multiply(factor, own[q])));
+    for (const row of rows) {
+      const factor = flipped ? ring.negate(row[p]) : row[p];
+      x.push(ring.subtract(ring.multiply(pivot, row[0]), ring.multiply(factor, own[0])));
+      y.push(ring.subtract(ring.multiply(pivot, row[q]), ring.multiply(factor, own[q])));
     }
-    this.#overRing(x, y, c);
+    this.#overRing(x, y, c, active);
   }
 
-  /** The points of a level 2, class 0 (at infinity) left out. */
-  onPlane(level: FlatLevel): void {
+  /** The points of a level 2, class 0 (at infinity) left out; classes 1 to active - 1 are active. */
+  alongItself(level: FlatLevel, active: number): void {
     if (level.plain) {
-      const entries = level.entries;
+      const { entries, classes } = level;
       this.count = 0;
-      this.parallelCount = 0;
-      for (let k = 1; k < level.classes; k++) this.#take(k, entries[2 * k], entries[2 * k + 1]);
-      this.#sort();
-      this.#settleTies();
-      return;
+      for (let k = 1; k < classes; k++) {
+        if (k === active) this.#sort();
+        this.#take(k, entries[2 * k], entries[2 * k + 1], k < active);
+      }
+      if (active >= classes) this.#sort();
+      if (this.#nothingHides()) return;
     }
-    const rows = level.elements;
+    const rows = level.elementRows(this.ring);
     this.#overRing(
       rows.map((row) => row[0]),
       rows.map((row) => row[1]),
       0,
+      active,
     );
   }
 
-  #take(k: number, x: number, y: number): void {
+  /** Class k has the value x + y s; the active come first, and are sorted when the others come. */
+  #take(k: number, x: number, y: number, isActive: boolean): void {
     if (y === 0) {
-      this.parallel[this.parallelCount++] = k;
       this.startsPositive[k] = x > 0 ? 1 : 0;
       return;
     }
     this.startsPositive[k] = y < 0 ? 1 : 0;
-    this.#x[k] = x;
-    this.#y[k] = y;
-    this.position[this.count] = -x / y;
-    this.order[this.count++] = k;
+    const here = -x / y;
+    if (isActive) {
+      this.#x[k] = x;
+      this.#y[k] = y;
+      this.position[this.count] = here;
+      this.order[this.count++] = k;
+      return;
+    }
+    const position = this.position;
+    let low = 0;
+    let high = this.count;
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (position[middle] < here) low = middle + 1;
+      else high = middle;
+    }
+    if (low === this.count) return;
+    this.nextWaiting[k] = this.firstWaiting[low];
+    this.firstWaiting[low] = k;
   }
 
   /** `divisor` is 0 where products are exact as they are, else the pivot that divides them. */
-  #plainLine(level: FlatLevel, c: number, divisor: number): void {
-    const entries = level.entries;
+  #takeLine(level: FlatLevel, c: number, active: number, divisor: number): void {
+    const { entries, classes } = level;
     const base = 3 * c;
-    let p = 2;
-    if (entries[base + 2] === 0) p = 1;
+    const p = entries[base + 2] === 0 ? 1 : 2;
     const q = 3 - p;
     const flip = entries[base + p] < 0 ? -1 : 1;
     const pivot = flip * entries[base + p];
     const own0 = entries[base];
     const ownq = entries[base + q];
-    const count = level.classes;
-    const { startsPositive, position, order, parallel } = this;
-    const xs = this.#x;
-    const ys = this.#y;
-    let crossings = 0;
-    let parallels = 0;
-    for (let k = 1; k < count; k++) {
+    this.count = 0;
+    for (let k = 1; k < classes; k++) {
+      if (k === active) this.#sort();
       if (k === c) continue;
       const offset = 3 * k;
       const factor = flip * entries[offset + p];
@@ -142,19 +149,9 @@ export class Crossings {
         x = Math.round(x / divisor);
         y = Math.round(y / divisor);
       }
-      if (y === 0) {
-        parallel[parallels++] = k;
-        startsPositive[k] = x > 0 ? 1 : 0;
-      } else {
-        startsPositive[k] = y < 0 ? 1 : 0;
-        xs[k] = x;
-        ys[k] = y;
-        position[crossings] = -x / y;
-        order[crossings++] = k;
-      }
+      this.#take(k, x, y, k < active);
     }
-    this.count = crossings;
-    this.parallelCount = parallels;
+    if (active >= classes) this.#sort();
   }
 
   /** Insertion sort in runs, then bottom-up merging: ascending by position. */
@@ -162,6 +159,7 @@ export class Crossings {
     const count = this.count;
     let position = this.position;
     let order = this.order;
+    this.firstWaiting.fill(-1, 0, count);
     const run = count <= 4 * RUN ? count : RUN;
     for (let start = 0; start < count; start += run) {
       const end = Math.min(start + run, count);
@@ -215,57 +213,35 @@ export class Crossings {
     this.#spareOrder = spareOrder;
   }
 
-  /** Where equal doubles hide different fractions, orders them exactly and renumbers all positions. */
-  #settleTies(): void {
+  /**
+   * True when active crossings at equal doubles coincide exactly. An inactive class at an equal
+   * double may then lie just before or after, but still before the next crossing: either way its sign
+   * is that of a point of the line there.
+   */
+  #nothingHides(): boolean {
     const { position, order, count } = this;
     const x = this.#x;
     const y = this.#y;
-    let settled = true;
-    for (let i = 1; i < count && settled; i++) {
+    for (let i = 1; i < count; i++) {
       if (position[i] !== position[i - 1]) continue;
-      settled = productsEqual(x[order[i]], y[order[i - 1]], x[order[i - 1]], y[order[i]]);
+      const k = order[i];
+      const l = order[i - 1];
+      if (!productsEqual(x[k], y[l], x[l], y[k])) return false;
     }
-    if (settled) return;
-    const before = (k: number, l: number): number => {
-      const a = -BigInt(x[k]) * BigInt(y[l]);
-      const b = -BigInt(x[l]) * BigInt(y[k]);
-      const same = y[k] > 0 === y[l] > 0;
-      return a === b ? 0 : a < b === same ? -1 : 1;
-    };
-    for (let start = 0; start < count; ) {
-      let end = start + 1;
-      while (end < count && position[end] === position[start]) end++;
-      if (end - start > 1) order.subarray(start, end).sort(before);
-      start = end;
-    }
-    this.#renumber((k, l) => before(k, l) === 0);
+    return true;
   }
 
-  #renumber(coincide: (k: number, l: number) => boolean): void {
-    const { position, order, count } = this;
-    let rank = 0;
-    for (let i = 0; i < count; i++) {
-      if (i > 0 && !coincide(order[i], order[i - 1])) rank++;
-      position[i] = rank;
-    }
-  }
-
-  #overRing(x: unknown[], y: unknown[], c: number): void {
-    const ring = this.ring;
+  #overRing(x: unknown[], y: unknown[], c: number, active: number): void {
+    const { ring } = this;
     const approximate = this.#x;
-    this.count = 0;
-    this.parallelCount = 0;
+    const crossing: number[] = [];
     for (let k = 1; k < x.length; k++) {
       if (k === c) continue;
       const side = ring.sign(y[k]);
-      if (side === 0) {
-        this.parallel[this.parallelCount++] = k;
-        this.startsPositive[k] = ring.sign(x[k]) > 0 ? 1 : 0;
-        continue;
-      }
-      this.startsPositive[k] = side < 0 ? 1 : 0;
+      this.startsPositive[k] = (side === 0 ? ring.sign(x[k]) > 0 : side < 0) ? 1 : 0;
+      if (side === 0) continue;
       approximate[k] = -ring.ratio(x[k], y[k]);
-      this.order[this.count++] = k;
+      crossing.push(k);
     }
     const compare = (k: number, l: number): number => {
       const difference = approximate[k] - approximate[l];
@@ -277,7 +253,30 @@ export class Crossings {
       const order = ring.sign(ring.subtract(left, right));
       return ring.sign(y[k]) === ring.sign(y[l]) ? order : -order;
     };
-    this.order.subarray(0, this.count).sort(compare);
-    this.#renumber((k, l) => compare(k, l) === 0);
+    crossing.sort(compare);
+    this.count = 0;
+    let rank = 0;
+    // Inactive classes wait for the first active crossing at their own place or later.
+    let waiting: number[] = [];
+    let sameRankStart = 0;
+    crossing.forEach((k, i) => {
+      if (i > 0 && compare(crossing[i - 1], k) !== 0) {
+        rank++;
+        sameRankStart = this.count;
+      }
+      if (k < active) {
+        this.firstWaiting[this.count] = -1;
+        this.position[this.count] = rank;
+        this.order[this.count++] = k;
+      } else {
+        waiting.push(k);
+      }
+      if (sameRankStart === this.count) return;
+      for (const inactive of waiting) {
+        this.nextWaiting[inactive] = this.firstWaiting[sameRankStart];
+        this.firstWaiting[sameRankStart] = inactive;
+      }
+      waiting = [];
+    });
   }
 }

@@ -86,53 +86,57 @@ export class SplitTree {
       this.#onlyLeaf(level, out);
       return;
     }
-    const W = this.#wordsPerRow;
-    const nodes = this.#nodes;
-    const from = splits.words;
-    const into = out.words;
-    const { along, against } = level;
-    let at = out.rows * W;
-    const emit = (v: number, side: number): void => {
-      const h = nodes[v * STRIDE + 2];
-      const c = nodes[v * STRIDE + 3] * W;
-      const mask = ((along[c + (h >> 5)] >>> h) & 1) === side ? along : against;
-      const row = v * W;
-      if (W === 2) {
-        into[at] = from[row] | mask[c];
-        into[at + 1] = from[row + 1] | mask[c + 1];
-        at += 2;
-      } else {
-        for (let w = 0; w < W; w++) into[at++] = from[row + w] | mask[c + w];
-      }
-    };
-    if (sorted) {
-      const stack = this.#pathNode;
-      let depth = 0;
-      let node = this.#root;
-      for (;;) {
-        for (;;) {
-          stack[depth++] = node;
-          const left = nodes[node * STRIDE];
-          if (left < 0) break;
-          node = left;
-        }
-        emit(node, 0);
-        let right = -1;
-        while (depth > 0 && right < 0) {
-          node = stack[--depth];
-          right = nodes[node * STRIDE + 1];
-          if (right < 0) emit(node, 1);
-        }
-        if (right < 0) break;
-        node = right;
-      }
-    } else {
+    if (sorted) this.#sortedLeaves(splits, level, out);
+    else {
       for (let v = 0; v < count; v++) {
-        if (nodes[v * STRIDE] < 0) emit(v, 0);
-        if (nodes[v * STRIDE + 1] < 0) emit(v, 1);
+        if (this.#nodes[v * STRIDE] < 0) this.#appendLeaf(v, 0, splits, level, out);
+        if (this.#nodes[v * STRIDE + 1] < 0) this.#appendLeaf(v, 1, splits, level, out);
       }
     }
-    out.rows += count + 1;
+  }
+
+  #sortedLeaves(splits: WordTable, level: FlatLevel, out: WordTable): void {
+    const nodes = this.#nodes;
+    const stack = this.#pathNode;
+    let depth = 0;
+    let node = this.#root;
+    for (;;) {
+      for (;;) {
+        stack[depth++] = node;
+        const left = nodes[node * STRIDE];
+        if (left < 0) break;
+        node = left;
+      }
+      this.#appendLeaf(node, 0, splits, level, out);
+      let right = -1;
+      while (depth > 0 && right < 0) {
+        node = stack[--depth];
+        right = nodes[node * STRIDE + 1];
+        if (right < 0) this.#appendLeaf(node, 1, splits, level, out);
+      }
+      if (right < 0) return;
+      node = right;
+    }
+  }
+
+  /** The region on the given side of split v: the split's word and the mask of its class on that side. */
+  #appendLeaf(v: number, side: number, splits: WordTable, level: FlatLevel, out: WordTable): void {
+    const W = this.#wordsPerRow;
+    const nodes = this.#nodes;
+    const { along, against } = level;
+    const from = splits.words;
+    const into = out.words;
+    const h = nodes[v * STRIDE + 2];
+    const c = nodes[v * STRIDE + 3] * W;
+    const mask = ((along[c + (h >> 5)] >>> h) & 1) === side ? along : against;
+    const row = v * W;
+    const at = out.rows++ * W;
+    if (W === 2) {
+      into[at] = from[row] | mask[c];
+      into[at + 1] = from[row + 1] | mask[c + 1];
+      return;
+    }
+    for (let w = 0; w < W; w++) into[at + w] = from[row + w] | mask[c + w];
   }
 
   /** No split: the positive side of class 0 is one region, and every class lies on one side of it. */

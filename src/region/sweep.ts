@@ -55,18 +55,20 @@ export class Sweep {
   /** The same for a level 2: the cells of a line, cut by points. */
   lineCells(level: FlatLevel, bound: number, out: WordTable): void {
     const W = this.#wordsPerRow;
+    const { classes, least } = level;
+    let active = 1;
+    while (active < classes && least[active] < bound) active++;
     const crossings = this.#crossings;
-    crossings.onPlane(level);
-    out.reserve(out.rows + level.classes);
+    crossings.alongItself(level, active);
+    out.reserve(out.rows + active);
     this.#findChanges(level);
     const current = this.#current;
     for (let w = 0; w < W; w++) current[w] = level.along[w];
     this.#applyStart(level);
     this.#append(out);
-    const { order, count } = crossings;
-    for (let i = 0; i < count; i++) {
-      this.#cross(order[i]);
-      if (level.least[order[i]] < bound) this.#append(out);
+    for (let i = 0; i < crossings.count; i++) {
+      this.#cross(i);
+      this.#append(out);
     }
   }
 
@@ -119,21 +121,14 @@ export class Sweep {
 
   #walkTwoWords(level: FlatLevel, c: number, active: number, out: WordTable): void {
     const crossings = this.#crossings;
-    crossings.alongLine(level, c);
-    const { along, against } = level;
+    crossings.alongLine(level, c, active);
+    const { along, against, classes } = level;
     const above = this.#abovePositive;
-    const { startsPositive, parallel, parallelCount, position, order, count } = crossings;
-    const own = above[c] === 1 ? along : against;
-    let word0 = along[0] | own[2 * c];
-    let word1 = along[1] | own[2 * c + 1];
-    for (let i = 0; i < parallelCount; i++) {
-      const k = parallel[i];
-      const mask = startsPositive[k] === 1 ? along : against;
-      word0 |= mask[2 * k];
-      word1 |= mask[2 * k + 1];
-    }
-    for (let i = 0; i < count; i++) {
-      const k = order[i];
+    const { startsPositive, position, order, count, firstWaiting, nextWaiting } = crossings;
+    startsPositive[c] = above[c];
+    let word0 = along[0];
+    let word1 = along[1];
+    for (let k = 1; k < classes; k++) {
       const mask = startsPositive[k] === 1 ? along : against;
       word0 |= mask[2 * k];
       word1 |= mask[2 * k + 1];
@@ -149,8 +144,12 @@ export class Sweep {
         const k = order[i];
         word0 ^= along[2 * k] | against[2 * k];
         word1 ^= along[2 * k + 1] | against[2 * k + 1];
+        for (let l = firstWaiting[i]; l >= 0; l = nextWaiting[l]) {
+          word0 ^= along[2 * l] | against[2 * l];
+          word1 ^= along[2 * l + 1] | against[2 * l + 1];
+        }
         // The line starts above k exactly where k has the greater slope.
-        if (startsPositive[k] === above[k] && k < active) opens = true;
+        if (startsPositive[k] === above[k]) opens = true;
         i++;
       } while (i < count && position[i] === here);
       if (opens) {
@@ -163,23 +162,22 @@ export class Sweep {
 
   #walk(level: FlatLevel, c: number, active: number, out: WordTable): void {
     const crossings = this.#crossings;
-    crossings.alongLine(level, c);
+    crossings.alongLine(level, c, active);
     const W = this.#wordsPerRow;
-    const { along, against } = level;
     const above = this.#abovePositive;
     const current = this.#current;
-    const own = above[c] === 1 ? along : against;
-    for (let w = 0; w < W; w++) current[w] = along[w] | own[c * W + w];
+    const { startsPositive, position, order, count } = crossings;
+    startsPositive[c] = above[c];
+    for (let w = 0; w < W; w++) current[w] = level.along[w];
     this.#applyStart(level);
     this.#append(out);
-    const { startsPositive, position, order, count } = crossings;
     for (let i = 0; i < count; ) {
       const here = position[i];
       let opens = false;
       do {
+        this.#cross(i);
         const k = order[i];
-        this.#cross(k);
-        if (startsPositive[k] === above[k] && k < active) opens = true;
+        if (startsPositive[k] === above[k]) opens = true;
         i++;
       } while (i < count && position[i] === here);
       if (opens) this.#append(out);
@@ -189,11 +187,10 @@ export class Sweep {
   /** Joins to the current word the sides on which the line starts. */
   #applyStart(level: FlatLevel): void {
     const W = this.#wordsPerRow;
-    const { along, against } = level;
+    const { along, against, classes } = level;
     const current = this.#current;
-    const { startsPositive, parallel, parallelCount, order, count } = this.#crossings;
-    for (let i = 0; i < parallelCount + count; i++) {
-      const k = i < parallelCount ? parallel[i] : order[i - parallelCount];
+    const { startsPositive } = this.#crossings;
+    for (let k = 1; k < classes; k++) {
       const mask = startsPositive[k] === 1 ? along : against;
       const single = this.#single[k];
       if (single >= 0) current[single >> 5] |= mask[k * W + (single >> 5)];
@@ -201,7 +198,14 @@ export class Sweep {
     }
   }
 
-  #cross(k: number): void {
+  /** Crosses the class of crossing i and those that wait for it. */
+  #cross(i: number): void {
+    const { order, firstWaiting, nextWaiting } = this.#crossings;
+    this.#change(order[i]);
+    for (let k = firstWaiting[i]; k >= 0; k = nextWaiting[k]) this.#change(k);
+  }
+
+  #change(k: number): void {
     const W = this.#wordsPerRow;
     const current = this.#current;
     const single = this.#single[k];
