@@ -2,6 +2,7 @@
 // quotient, coordinate by coordinate, so that a unimodular change is a few passes over arrays. Every
 // operation is bounded before it is done; a quotient that would pass 2^53 is handed over.
 import { ExactSums, exactLimit } from './exact-sums.js';
+import { plainGcd, planeMap } from './plane-map.js';
 
 /** Vectors up to `count` at one level, for whoever takes over: coordinate c of vector j is rows[c][j]. */
 export interface PlainLevel {
@@ -19,10 +20,7 @@ export type HandOver = (level: PlainLevel, i: number) => ReadonlyMap<bigint, rea
 export const cornerLimit = 2 ** 20;
 
 /** Coordinates of a quotient stay below this, or are handed over. */
-const entryLimit = 2 ** 31;
-
-/** Entries of the map onto a plane quotient: three products with coordinates stay below 2^53. */
-const mapLimit = 2 ** 20;
+export const entryLimit = 2 ** 31;
 
 /** Passes of pairwise reduction over the coordinates of a quotient: more gain nothing. */
 const reductionPasses = 2;
@@ -80,6 +78,11 @@ export class PlainContraction {
   /** To be filled by the caller before `visit`: the vectors, primitive and not parallel. */
   get top(): PlainLevel {
     return this.levels[this.levels.length - 1];
+  }
+
+  /** The level of a rank: what `contract` on the one above has made. */
+  levelOf(rank: number): PlainLevel {
+    return this.levels[rank];
   }
 
   /** All terms of the first `count` vectors of the top level, rank 3 or more: coefficients by order. */
@@ -154,7 +157,7 @@ export class PlainContraction {
    * Fills the level below with the vectors before i modulo vector i, primitive and merged; returns
    * their number, -1 where a number would pass its bound.
    */
-  private contract(level: PlainLevel, i: number): number {
+  contract(level: PlainLevel, i: number): number {
     const r = level.rank;
     const below = this.levels[r - 1];
     const { rows, corner } = below;
@@ -363,45 +366,4 @@ export class PlainContraction {
     }
     return true;
   }
-}
-
-function plainGcd(a: number, b: number): number {
-  while (b !== 0) [a, b] = [b, a % b];
-  return a;
-}
-
-type PlaneMap = readonly [number, number, number, number, number, number];
-
-/**
- * Two short functionals, three entries each, that span those vanishing on the primitive vector
- * (a, b, c); null where an entry passes its bound.
- */
-function planeMap(a: number, b: number, c: number): PlaneMap | null {
-  // Two coordinates first: u a + v b = g; then (b/g, -a/g, 0) and (u c, v c, -g) vanish on it, and
-  // their cross product is the vector itself, up to sign: they span.
-  if (a === 0 && b === 0) return [1, 0, 0, 0, 1, 0];
-  let [g, u, v, h, s, t] = [a, 1, 0, b, 0, 1];
-  while (h !== 0) {
-    const q = Math.round(g / h);
-    [g, u, v, h, s, t] = [h, s, t, g - q * h, u - q * s, v - q * t];
-  }
-  let [x0, x1, x2] = [b / g, -a / g, 0];
-  let [y0, y1, y2] = [u * c, v * c, -g];
-  if (Math.max(...[x0, x1, y0, y1, y2].map(Math.abs)) >= 2 ** 25) return null;
-  for (;;) {
-    const xx = x0 * x0 + x1 * x1 + x2 * x2;
-    const yy = y0 * y0 + y1 * y1 + y2 * y2;
-    if (yy < xx) {
-      [x0, x1, x2, y0, y1, y2] = [y0, y1, y2, x0, x1, x2];
-      continue;
-    }
-    const q = Math.round((x0 * y0 + x1 * y1 + x2 * y2) / xx);
-    if (q === 0) break;
-    y0 -= q * x0;
-    y1 -= q * x1;
-    y2 -= q * x2;
-    if (y0 * y0 + y1 * y1 + y2 * y2 >= yy) break;
-  }
-  const most = Math.max(...[x0, x1, x2, y0, y1, y2].map(Math.abs));
-  return most < mapLimit ? [x0, x1, x2, y0, y1, y2] : null;
 }

@@ -25,7 +25,7 @@ export interface EhrhartFlatOptions {
 
 // Seconds, measured on one core of a 2-core machine with Node 20: orders of magnitude elsewhere.
 const perFlat = 4e-6;
-const perFlatEntry = 6e-9;
+const perFlatEntry = 9e-9;
 
 /** About how long the route takes on a lattice with that many flats, the listing of them apart. */
 export function estimateEhrhartByFlats(arrangement: Arrangement, flats: number): number {

@@ -22,8 +22,8 @@ export interface SubsetOptions {
 }
 
 // Seconds, measured on one core of a 2-core machine with Node 20: orders of magnitude elsewhere.
-const perSubset = 1.5e-8;
-const perProduct = 1.4e-9;
+const perSubset = 4e-8;
+const perProduct = 3e-9;
 const bigSlower = 60;
 
 /** About how long the route takes at most; immediate. */
