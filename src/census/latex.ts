@@ -5,10 +5,10 @@ import type { CensusRecord } from './record.js';
 import {
   caution,
   countRows,
+  factored,
   needsCaution,
   plural,
   propertyRows,
-  rootFactors,
   titleOf,
   total,
 } from './wording.js';
@@ -42,7 +42,7 @@ function tabular(columns: string, rows: readonly (readonly string[])[]): string[
 export function formatLatex(record: CensusRecord): string {
   const { input, arrangement, run } = record;
   const chi = formatPolynomialLatex(record.characteristicPolynomial.coefficients.map(BigInt));
-  const factors = rootFactors(record, formatFactorsLatex);
+  const factors = factored(record, formatFactorsLatex, formatPolynomialLatex);
   const sum = (list: readonly string[] | null): string => number(list && total(list));
   const title = escapeLatex(titleOf(record));
   const { linesByMultiplicity } = record.properties;
@@ -73,7 +73,7 @@ export function formatLatex(record: CensusRecord): string {
     `\\caption{${title}: ${plural(input.normalCount, 'normal')} in dimension ${input.ambientDimension}, ` +
       `${plural(arrangement.hyperplanes, 'hyperplane')} of rank ${arrangement.rank}, ` +
       `${number(record.regions)} regions. ` +
-      `$\\chi(t) = ${grouped(chi, '{,}')}${factors === null ? '' : ` = ${grouped(factors, '{,}')}`}$. ` +
+      `$\\chi(t) = ${grouped(chi, '{,}')} = ${grouped(factors, '{,}')}$. ` +
       `The arrangement is ${answers.join(', ')}.${multiplicity}}`,
     '\\end{table}',
     '',

@@ -4,10 +4,10 @@ import type { CensusRecord } from './record.js';
 import {
   caution,
   countRows,
+  factored,
   needsCaution,
   plural,
   propertyRows,
-  rootFactors,
   titleOf,
   total,
 } from './wording.js';
@@ -42,7 +42,6 @@ export function formatMarkdown(record: CensusRecord): string {
     shown(row.zonotopeFaces),
   ]);
   const { linesByMultiplicity } = record.properties;
-  const factors = rootFactors(record);
   const blocks: string[][] = [
     [`# ${escapeMarkdown(titleOf(record))}`],
     [
@@ -54,7 +53,7 @@ export function formatMarkdown(record: CensusRecord): string {
       ['dimension', 'flats', 'faces', 'faces of the zonotope'],
       [...counted, ['total', sum(record.flats), sum(record.faces), sum(record.zonotope.faces)]],
     ),
-    [`Characteristic polynomial: \`${chi.text}\`${factors === null ? '' : ` = \`${factors}\``}`],
+    [`Characteristic polynomial: \`${chi.text}\` = \`${factored(record)}\``],
     tableOf(
       ['property', 'answer'],
       propertyRows(record).map(([name, text]) => [name, text]),

@@ -15,16 +15,18 @@ import type { CensusRecord } from './record.js';
 import {
   caution,
   countRows,
+  factored,
   needsCaution,
   plural,
   propertyRows,
-  rootFactors,
   titleOf,
   total,
 } from './wording.js';
 
 /** Columns of the terms on the left of a line. */
 const termColumns = 16;
+/** Lines of a title before it is cut. */
+const titleLines = 3;
 /** Characters of a label before it is cut. */
 const labelColumns = 24;
 /** Parallel classes named one by one. */
@@ -55,7 +57,11 @@ function term(name: string, text: string): string[] {
 function given(record: CensusRecord): string[] {
   const { input, arrangement: of } = record;
   const title = printable(titleOf(record));
-  const lines = wrap(title, pageColumns).slice(0, 3);
+  const lines = wrap(title, pageColumns);
+  if (lines.length > titleLines) {
+    lines.length = titleLines;
+    lines[titleLines - 1] = cut(`${lines[titleLines - 1]} ...`, pageColumns);
+  }
   if (title !== input.source) lines.push(...term('from', printable(input.source)));
   const named = input.coordinates?.map((name) => cut(printable(name), labelColumns)).join(', ');
   const field = input.field === 'Q' ? 'rational' : `in ${input.field}`;
@@ -115,13 +121,9 @@ function polynomial(record: CensusRecord): string[] {
   const { text, integerRoots } = record.characteristicPolynomial;
   const lines = ['Characteristic polynomial'];
   lines.push(...hanging('  ', unbroken(grouped(text)), pageColumns));
-  const factors = rootFactors(record);
-  if (factors === null || integerRoots === null) {
-    lines.push('  its roots are not all integers');
-    return lines;
-  }
-  lines.push(...hanging('  = ', unbroken(grouped(factors)), pageColumns));
-  lines.push(...term('integer roots', integerRoots.map((root) => grouped(root)).join(', ')));
+  lines.push(...hanging('  = ', unbroken(grouped(factored(record))), pageColumns));
+  const roots = integerRoots?.map((root) => grouped(root)).join(', ') ?? 'no, not all';
+  lines.push(...term('integer roots', roots));
   return lines;
 }
 

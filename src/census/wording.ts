@@ -1,5 +1,5 @@
 // The words that the page, the Markdown and the LaTeX table have in common, from the record alone.
-import { formatFactors } from '../exact/polynomial.js';
+import { divideByLinear, formatFactors, formatPolynomial } from '../exact/polynomial.js';
 import type { CensusRecord } from './record.js';
 
 /** Said wherever a count could be taken for a statement about equipment or offers. */
@@ -45,20 +45,27 @@ export function total(counts: readonly string[]): string {
   return counts.reduce((sum, count) => sum + BigInt(count), 0n).toString();
 }
 
-/** The roots that are all integers, as (root, multiplicity) in a product; null otherwise. */
-export function rootFactors(
-  { characteristicPolynomial }: CensusRecord,
-  format: typeof formatFactors = formatFactors,
-): string | null {
-  const roots = characteristicPolynomial.integerRoots;
-  if (roots === null) return null;
-  const distinct = [...new Set(roots)];
-  return format(
-    distinct.map((root) => ({
-      root: BigInt(root),
-      multiplicity: roots.filter((other) => other === root).length,
-    })),
-  );
+/** The polynomial as a product: its integer roots, and what is left of it where they are not all. */
+export function factored(
+  { characteristicPolynomial, arrangement }: CensusRecord,
+  formatRoots: typeof formatFactors = formatFactors,
+  formatRest: typeof formatPolynomial = formatPolynomial,
+): string {
+  let rest = characteristicPolynomial.coefficients.map(BigInt);
+  const roots: { root: bigint; multiplicity: number }[] = [];
+  // If all are integers they add up to the number of hyperplanes; a larger one would stay in the rest.
+  for (let root = 0n; root <= arrangement.hyperplanes && rest.length > 1; root++) {
+    let multiplicity = 0;
+    for (;;) {
+      const { quotient, remainder } = divideByLinear(rest, root);
+      if (remainder !== 0n || rest.length === 1) break;
+      rest = quotient;
+      multiplicity++;
+    }
+    if (multiplicity > 0) roots.push({ root, multiplicity });
+  }
+  if (roots.length === 0) return `(${formatRest(rest)})`;
+  return rest.length === 1 ? formatRoots(roots) : `${formatRoots(roots)} (${formatRest(rest)})`;
 }
 
 /** Each property with its answer: yes, no, or not decided. */

@@ -50,11 +50,12 @@ async function run(name: string, options: RegionsFlags): Promise<void> {
       await writeTo(options.out ?? null, (result) => result.write(`${text}\n`));
       return;
     }
-    const [{ regionRows }, { writeRegions }] = await Promise.all([
+    const [{ regionRows }, { writeRegions }, { formatCount }] = await Promise.all([
       import('../census/region-rows.js'),
       import('../export/regions.js'),
+      import('../census/quantities.js'),
     ]);
-    progress.stage('writing');
+    progress.stage(`writing ${formatCount(total)} regions`);
     const rows = progress.counted(regionRows(arrangement, table), total);
     await writeTo(options.out ?? null, (result) =>
       result.writeAll(writeRegions(arrangement, rows, format as ListFormat)),
