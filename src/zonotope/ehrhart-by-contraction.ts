@@ -12,7 +12,7 @@ import {
 import { cornerLimit, entryLimit, type HandOver, PlainContraction } from './contraction-plain.js';
 import { type EhrhartTerms, termsOf } from './ehrhart-terms.js';
 import { binomial } from './exterior-steps.js';
-import type { LatticeGenerators } from './lattice-generators.js';
+import { inShortCoordinates, type LatticeGenerators } from './lattice-generators.js';
 import { largestOf as largestOfRows } from './plain-ring.js';
 
 export interface ContractionOptions {
@@ -113,7 +113,11 @@ export function ehrhartByContraction(
   return termsOf(plainKernel(input, options.onProgress ?? null).visit(input.vectors.length));
 }
 
-function mergedInput({ rank, vectors, corner, denominator }: LatticeGenerators): LatticeVectors {
+function mergedInput(generators: LatticeGenerators): LatticeVectors {
+  const small = largestOfRows(generators.vectors) < BigInt(entryLimit);
+  const { rank, vectors, corner, denominator } = small
+    ? generators
+    : inShortCoordinates(generators);
   const merged = mergeParallel(
     vectors,
     vectors.map(() => 1n),

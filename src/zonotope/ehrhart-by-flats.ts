@@ -10,6 +10,7 @@ import { magnitude } from '../exact/integers.js';
 import type { FlatLattice } from '../flat/lattice.js';
 import { type EhrhartTerms, termsOf } from './ehrhart-terms.js';
 import { type LatticeGenerators, orderOf } from './lattice-generators.js';
+import { shortenRows } from './lattice-quotient.js';
 import {
   BigRows,
   type LatticeRows,
@@ -17,6 +18,7 @@ import {
   PlainRows,
   withoutColumn,
 } from './lattice-rows.js';
+import { largestOf } from './plain-ring.js';
 
 export interface EhrhartFlatOptions {
   /** Called now and then with the flats done, of lattice.flatCount. */
@@ -87,7 +89,8 @@ class FlatVolumes {
     this.chain[0] = 0;
     const columns = [...directions, generators.corner.map((x) => x % generators.denominator)];
     const rows = directions[0].map((_, c) => columns.map((v) => v[c]));
-    this.images[0] = rows.every((row) => row.every((x) => magnitude(x) < 1n << 52n))
+    if (!fitsPlain(rows)) shortenRows(rows);
+    this.images[0] = fitsPlain(rows)
       ? new PlainRows(rows.map((row) => Float64Array.from(row, Number)))
       : new BigRows(rows);
   }
@@ -189,6 +192,10 @@ class FlatVolumes {
     const columns = Array.from({ length: this.weights.length + 1 }, (_, c) => rows.columnOf(c));
     return new BigRows(columns[0].map((_, i) => columns.map((column) => column[i])));
   }
+}
+
+function fitsPlain(rows: readonly (readonly bigint[])[]): boolean {
+  return largestOf(rows) < 1n << 52n;
 }
 
 function dividedExactly(sum: bigint, divisor: bigint): bigint {

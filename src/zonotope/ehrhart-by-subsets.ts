@@ -7,7 +7,7 @@ import { gcd, magnitude } from '../exact/integers.js';
 import { type EhrhartTerms, termsOf } from './ehrhart-terms.js';
 import { ExactSums } from './exact-sums.js';
 import { binomial, type ExteriorStep, exteriorSteps } from './exterior-steps.js';
-import { type LatticeGenerators, orderOf } from './lattice-generators.js';
+import { inShortCoordinates, type LatticeGenerators, orderOf } from './lattice-generators.js';
 
 /** The cost of ehrhartBySubsets. */
 export interface SubsetEstimate {
@@ -38,7 +38,8 @@ export function estimateSubsets(generators: LatticeGenerators): SubsetEstimate {
     const overhead = k === r ? 0 : perSubset;
     seconds += count * (overhead + perProduct * k * binomial(r, k));
   }
-  return { subsets, seconds: minorsArePlain(generators) ? seconds : bigSlower * seconds };
+  const plain = minorsArePlain(generators) || minorsArePlain(inShortCoordinates(generators));
+  return { subsets, seconds: plain ? seconds : bigSlower * seconds };
 }
 
 /** Exact for every input; every independent subset is visited. */
@@ -47,9 +48,10 @@ export function ehrhartBySubsets(
   options: SubsetOptions = {},
 ): EhrhartTerms {
   const onProgress = options.onProgress ?? null;
-  return minorsArePlain(generators)
-    ? new PlainSubsets(generators, onProgress).terms()
-    : new BigSubsets(generators, onProgress).terms();
+  const short = minorsArePlain(generators) ? generators : inShortCoordinates(generators);
+  return minorsArePlain(short)
+    ? new PlainSubsets(short, onProgress).terms()
+    : new BigSubsets(short, onProgress).terms();
 }
 
 /**

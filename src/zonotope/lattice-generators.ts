@@ -11,6 +11,7 @@ import {
   negateNumber,
 } from '../exact/number.js';
 import { unitRange } from '../input/generators.js';
+import { shortenRows } from './lattice-quotient.js';
 
 /**
  * scale Z = corner + the sum of the segments [0, vectors[j]], in coordinates of
@@ -91,6 +92,21 @@ export function centredGenerators(generators: LatticeGenerators): LatticeGenerat
     generators.vectors.reduce((total, v) => total - v[i], 0n),
   );
   return { ...generators, ...lowestTerms(sum, 2n) };
+}
+
+/**
+ * The same in another basis of the lattice, in which the numbers are small if any such is found
+ * quickly: coordinates are taken from one another while that makes all of them together shorter.
+ */
+export function inShortCoordinates(generators: LatticeGenerators): LatticeGenerators {
+  const { vectors, corner } = generators;
+  const rows = corner.map((x, c) => [...vectors.map((v) => v[c]), x]);
+  shortenRows(rows);
+  return {
+    ...generators,
+    vectors: vectors.map((_, j) => rows.map((row) => row[j])),
+    corner: rows.map((row) => row[vectors.length]),
+  };
 }
 
 function lowestTerms(

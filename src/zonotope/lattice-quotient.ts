@@ -23,7 +23,7 @@ export function quotientMap(primitive: readonly bigint[]): bigint[][] {
         throw new RangeError('quotientMap: vector: expected a primitive one');
       }
       rows.splice(least, 1);
-      shorten(rows);
+      shortenRows(rows);
       return rows;
     }
     const pivot = values[least];
@@ -50,8 +50,11 @@ function dot(u: readonly bigint[], v: readonly bigint[]): bigint {
   return sum;
 }
 
-/** Pairwise reduction: each step strictly shortens a row. */
-function shorten(rows: bigint[][]): void {
+/**
+ * Pairwise reduction (after C. F. Gauss, 1801): multiples of rows are taken from others, in place,
+ * until that shortens none. Each step does, so it ends.
+ */
+export function shortenRows(rows: bigint[][]): void {
   for (let changed = true; changed; ) {
     changed = false;
     for (let i = 0; i < rows.length; i++) {

@@ -1,6 +1,7 @@
 // The rows of an integer matrix whose columns are images of vectors in a lattice quotient, in doubles
 // or in big integers: row operations by the whole row, so that the two are told apart once a row.
 import { magnitude, roundedQuotient } from '../exact/integers.js';
+import { shortenRows } from './lattice-quotient.js';
 
 /** r rows of n integers, changed by unimodular row operations. */
 export interface LatticeRows {
@@ -154,22 +155,7 @@ export class BigRows implements LatticeRows {
   }
 
   shorten(): void {
-    const { rows } = this;
-    for (let pass = 0; pass < passes; pass++) {
-      for (let i = 0; i < rows.length; i++) {
-        for (let j = 0; j < rows.length; j++) {
-          if (i === j) continue;
-          let length = 0n;
-          let inner = 0n;
-          for (let c = 0; c < rows[j].length; c++) {
-            length += rows[j][c] * rows[j][c];
-            inner += rows[i][c] * rows[j][c];
-          }
-          const q = length === 0n ? 0n : roundedQuotient(inner, length);
-          if (q !== 0n) this.subtract(i, q, j);
-        }
-      }
-    }
+    shortenRows(this.rows);
   }
 
   contentOf(column: number): bigint {
