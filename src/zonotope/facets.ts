@@ -23,7 +23,8 @@ import { largestOf, plainIntegerRing, squaredMinorBound } from './plain-ring.js'
 export interface Facet<E = unknown> {
   /** d entries, outward: primitive over Q, content-free over Z[sqrt(k)]; a ray of the arrangement. */
   readonly normal: readonly E[];
-  /** The same in coordinates of `arrangement.spanBasis`: normal . z = essential . coordinates of z. */
+  /** The same in essential coordinates: its products with the hyperplanes' essential vectors are those
+   * of `normal` with their normals. Over Q these are coordinates of `arrangement.spanBasis`. */
   readonly essential: readonly E[];
   readonly offset: ExactNumber;
   /** 0-based generators that are free on it, ascending: it is a translate of their zonotope. */

@@ -65,7 +65,7 @@ export function marginAt<E>(
     // Signed squares compare as the distances do.
     const square = divideNumbers(
       field.product(slack, slack),
-      metric.squaredLength(facet.essential.map((e) => field.numberOf(e))),
+      metric.squaredLength(normal),
       k ?? 0n,
     );
     const signed = signOfNumber(slack, k) < 0 ? negateNumber(square) : square;
@@ -151,7 +151,10 @@ class NumberField<E> {
   }
 }
 
-/** Lengths of functionals on the span: y has squared length y . G^-1 y, G the Gram matrix of spanBasis. */
+/**
+ * Lengths of functionals on the span: one with values y on spanBasis has squared length y . G^-1 y, G
+ * the Gram matrix of that basis.
+ */
 class SpanMetric<E> {
   private readonly field: NumberField<E>;
   private readonly basis: readonly (readonly ExactNumber[])[];
@@ -166,9 +169,11 @@ class SpanMetric<E> {
     this.inverse = rank === dimension ? null : inverseOf(gram, generators.radicand ?? 0n);
   }
 
-  squaredLength(y: readonly ExactNumber[]): ExactNumber {
-    const { field, inverse } = this;
-    if (inverse === null) return field.dot(y, y);
+  /** Of the part of the normal that lies in the span. */
+  squaredLength(normal: readonly ExactNumber[]): ExactNumber {
+    const { basis, field, inverse } = this;
+    if (inverse === null) return field.dot(normal, normal);
+    const y = basis.map((u) => field.dot(u, normal));
     return field.dot(
       y,
       inverse.map((row) => field.dot(row, y)),

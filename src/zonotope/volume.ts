@@ -5,6 +5,7 @@
 import type { Arrangement } from '../arrangement/arrangement.js';
 import {
   commonDenominator,
+  divideNumbers,
   type ExactNumber,
   exactNumber,
   multiplyNumbers,
@@ -75,24 +76,20 @@ export function euclideanVolume<E>(
 export function squaredCovolume<E>(arrangement: Arrangement<E>): ExactNumber {
   const { ring, spanBasis, rank, dimension } = arrangement;
   if (rank === dimension) return exactNumber(1n);
-  const gram = spanBasis.map((u) =>
-    spanBasis.map((v) => u.reduce((sum, x, i) => ring.add(sum, ring.multiply(x, v[i])), ring.zero)),
-  );
-  let previous = ring.one;
-  // Positive definite: every leading minor is positive, so the diagonal serves as pivots.
-  for (let p = 0; p + 1 < rank; p++) {
-    for (let i = p + 1; i < rank; i++) {
-      for (let j = p + 1; j < rank; j++) {
-        const cross = ring.subtract(
-          ring.multiply(gram[p][p], gram[i][j]),
-          ring.multiply(gram[i][p], gram[p][j]),
-        );
-        gram[i][j] = ring.divideExactly(cross, previous);
-      }
-    }
-    previous = gram[p][p];
-  }
-  return numberOf(ring, gram[rank - 1][rank - 1]);
+  const gram = spanBasis.map((u) => spanBasis.map((v) => dot(ring, u, v)));
+  return numberOf(ring, sumBySubsets(ring, gram, rank));
+}
+
+/** The size of the determinant of spanBasis in essential coordinates: 1 over Q. */
+function basisDeterminant<E>(arrangement: Arrangement<E>): ExactNumber {
+  const { ring, spanBasis, lift, rank } = arrangement;
+  const columns = Array.from({ length: rank }, (_, c) => lift.map((row) => row[c]));
+  const essential = spanBasis.map((u) => columns.map((column) => dot(ring, u, column)));
+  return numberOf(ring, sumBySubsets(ring, essential, rank));
+}
+
+function dot<E>(ring: Ring<E>, u: readonly E[], v: readonly E[]): E {
+  return u.reduce((sum, x, i) => ring.add(sum, ring.multiply(x, v[i])), ring.zero);
 }
 
 function numberOf<E>(ring: Ring<E>, e: E): ExactNumber {
@@ -117,7 +114,8 @@ function measured<E>(arrangement: Arrangement<E>, sum: DeterminantSum): ExactNum
     generators.radicand === null
       ? exactNumber(rationalSum(vectors as unknown as bigint[][], rank, ring, sum))
       : numberOf(ring, sum(ring, vectors, rank));
-  return multiplyNumbers(total, exactNumber(1n, 0n, scale ** BigInt(rank)), 0n);
+  const relative = divideNumbers(total, basisDeterminant(arrangement), generators.radicand ?? 0n);
+  return multiplyNumbers(relative, exactNumber(1n, 0n, scale ** BigInt(rank)), 0n);
 }
 
 /**
