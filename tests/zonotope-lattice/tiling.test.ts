@@ -16,6 +16,7 @@ import { ehrhartByContraction } from '../../src/zonotope/ehrhart-by-contraction.
 import { latticePointsIn } from '../../src/zonotope/ehrhart-terms.js';
 import { ZonotopeMembership } from '../../src/zonotope/membership.js';
 import { boundTiles, type Tile, TileSearch, tilesOf } from '../../src/zonotope/tiling.js';
+import { latticePointsByTiles } from '../../src/zonotope/tiling-points.js';
 import { allSubsets, arrangementOf, sequence, smallRows } from '../support/arrangements.js';
 import { choices, determinant, minorGcd } from '../support/minors.js';
 import { rangedArrangement, rangedRows, sumsOfEnds } from './ranged.js';
@@ -155,6 +156,24 @@ describe('the half-open tiling', () => {
         },
       ),
       { numRuns: 15 },
+    );
+  });
+
+  it('has the lattice points of the Ehrhart polynomial by the Smith form of each tile', () => {
+    const dilates = [0n, 1n, 2n, 3n, 4n, 6n, 25n];
+    fc.assert(
+      fc.property(
+        fc
+          .integer({ min: 1, max: 4 })
+          .chain((denominator) => rangedRows({ dimension: 3, maximum: 6, bound: 3, denominator })),
+        (input) => {
+          const arrangement = rangedArrangement(input);
+          const terms = ehrhartByContraction(generatorsFor(arrangement));
+          expect(latticePointsByTiles(arrangement, tilesOf(arrangement), dilates)).toEqual(
+            dilates.map((t) => latticePointsIn(terms, t)),
+          );
+        },
+      ),
     );
   });
 
