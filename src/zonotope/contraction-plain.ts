@@ -93,7 +93,6 @@ export class PlainContraction {
     const result = new Map<bigint, bigint[]>();
     this.orders.forEach((order, place) => {
       const at = place * this.stride;
-      if (at >= sums.length) return;
       result.set(
         BigInt(order),
         Array.from({ length: rank + 1 }, (_, k) => sums.valueOf(at + k)),
@@ -114,6 +113,7 @@ export class PlainContraction {
         const merged = this.contract(level, i);
         if (merged >= 0) {
           this.descend(rank - 1, merged);
+          // Below, no set has as many members as the rank here: the top places are free.
           sums.addMultiple(level.weights[i], this.sums[rank - 1], 1);
           continue;
         }

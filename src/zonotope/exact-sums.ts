@@ -53,16 +53,19 @@ export class ExactSums {
     this.big[i] = (this.big[i] ?? 0n) + x;
   }
 
-  /** Adds w times all totals of `other`, moved up by `shift` places; w an integer in [0, 2^53). */
+  /**
+   * Adds w times all totals of `other`, each `shift` places up, w an integer in [0, 2^53). The last
+   * `shift` totals of `other` are zero.
+   */
   addMultiple(w: number, other: ExactSums, shift: number): void {
-    this.extend(other.length + shift);
-    for (let i = 0; i < other.length; i++) this.addProduct(i + shift, w, other.plain[i]);
+    this.extend(other.length);
+    for (let i = 0; i + shift < other.length; i++) this.addProduct(i + shift, w, other.plain[i]);
     other.big.forEach((x, i) => {
       this.addBig(i + shift, BigInt(w) * x);
     });
   }
 
   valueOf(i: number): bigint {
-    return BigInt(this.plain[i]) + (this.big[i] ?? 0n);
+    return i < this.length ? BigInt(this.plain[i]) + (this.big[i] ?? 0n) : 0n;
   }
 }

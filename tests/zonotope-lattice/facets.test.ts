@@ -9,16 +9,19 @@ import { findPivots } from '../../src/exact/elimination.js';
 import { integerRing } from '../../src/exact/integers.js';
 import { addNumbers, exactNumber, formatNumber, multiplyNumbers } from '../../src/exact/number.js';
 import { signOfNumber } from '../../src/exact/number-order.js';
+import type { Quadratic } from '../../src/exact/quadratic.js';
 import { listFlats } from '../../src/flat/lattice.js';
 import { reflectionArrangement } from '../../src/input/families/reflection.js';
 import { ehrhartByContraction } from '../../src/zonotope/ehrhart-by-contraction.js';
 import { interiorPointsIn, latticePointsIn } from '../../src/zonotope/ehrhart-terms.js';
 import { type Facet, facetsOf } from '../../src/zonotope/facets.js';
 import { DirectPoints } from '../../src/zonotope/points-direct.js';
-import { allSubsets, arrangementOf, smallRows } from '../support/arrangements.js';
+import { allSubsets, arrangementOf, type Entry, smallRows } from '../support/arrangements.js';
 import { hullPlanes } from '../support/hull-planes.js';
 import { rangedArrangement, rangedRows, sumsOfEnds } from './ranged.js';
 import { generatorsFor } from './routes.js';
+
+const minus = ([a, b]: [number, number]): [number, number] => [-a, -b];
 
 const facetList = <E>(arrangement: Arrangement<E>): Facet<E>[] => [
   ...facetsOf(arrangement, listFlats(arrangement)),
@@ -95,6 +98,41 @@ describe('facets', () => {
     expect(facetList(buildArrangement(reflectionArrangement('B3')))).toHaveLength(26);
     expect(facetList(buildArrangement(reflectionArrangement('F4')))).toHaveLength(240);
     expect(facetList(rational(allSubsets(4)))).toHaveLength(90);
+  });
+
+  it('hold on every sum of ends over the golden field, and in a plane of it', () => {
+    const golden: [number, number] = [1, 1];
+    const lists: Entry[][][] = [
+      [
+        [0, 2, golden],
+        [golden, 0, 2],
+        [2, golden, 0],
+        [1, 1, 1],
+        [1, 0, [0, 1]],
+      ],
+      [
+        [0, 2, golden],
+        [golden, 2, golden],
+        [1, [0, 2], [5, 1]],
+        [[1, -1], -2, minus(golden)],
+      ],
+    ];
+    for (const rows of lists) {
+      const arrangement = arrangementOf(rows) as Arrangement<Quadratic>;
+      const sums = sumsOfEnds(arrangement);
+      for (const { normal, offset, generators } of facetList(arrangement)) {
+        const signs = sums.map((sum) => {
+          const value = sum.reduce(
+            (total, x, i) =>
+              addNumbers(total, multiplyNumbers(x, exactNumber(normal[i].a, normal[i].b), 5n)),
+            multiplyNumbers(offset, exactNumber(-1n), 5n),
+          );
+          return signOfNumber(value, 5n);
+        });
+        expect(Math.max(...signs)).toBe(0);
+        expect(signs.filter((sign) => sign === 0)).toHaveLength(2 ** generators.length);
+      }
+    }
   });
 
   it('are two end points in rank 1', () => {
