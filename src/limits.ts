@@ -43,5 +43,23 @@ export const regionsListedPerSecond = 1_500_000;
 /** Faces a second that estimates count on. */
 export const facesListedPerSecond = 2_500_000;
 
+/** Seconds for each cover walked when faces are counted by Moebius values ... */
+export const secondsPerIntervalStep = 1.2e-8;
+
+/** ... and where the tables of the lattice are far larger than the processor's cache. */
+export const secondsPerDistantStep = 4e-8;
+
+/** Flats from which they are. */
+export const distantFlats = 500_000;
+
 /** Bytes for each Int32 word of a listed row, with the room tables leave to grow. */
 export const bytesPerListedWord = 11;
+
+/** Seconds by estimate in which a further route is run though two have been. */
+export const quickRouteSeconds = 5;
+
+/** Seconds by estimate in which lattice points are counted one line at a time, as a check. */
+export const directCountSeconds = 0.5;
+
+/** Faces of the surface of a zonotope in space: seconds, and files of some 100 MB. */
+export const surfaceFaces = 250_000;

@@ -86,8 +86,11 @@ export function runRoutes(
     listener.stage(`flats and their Moebius values, about ${formatSeconds(needs.flats.seconds)}`);
     lattice = stages.listFlats(arrangement, (done, total) => listener.part(done, total));
     polynomialByFlats = stages.polynomialByFlats(lattice);
-    listener.stage('faces by Moebius values');
-    facesByMoebius = stages.facesByMoebius(lattice);
+    const need = { bytes: 0, seconds: stages.estimateMoebius(lattice) };
+    if (within(need)) {
+      listener.stage(`faces by Moebius values, about ${formatSeconds(need.seconds)}`);
+      facesByMoebius = stages.facesByMoebius(lattice);
+    } else leaveOut('faces by Moebius values', '', need);
   } else leaveOut('flats with Moebius values, and all counts by dimension', '', needs.flats);
 
   const regions = regionsFromPolynomial((polynomialByDeletion ?? polynomialByFlats)!);
@@ -108,7 +111,7 @@ export function runRoutes(
   if (facesByMoebius === null) {
     notRun.push({
       route: 'faces by listing',
-      why: 'how many there are is not known, since the flats were not listed',
+      why: 'how many there are is not known without the faces by Moebius values',
     });
   } else {
     const faces = facesByMoebius.reduce((sum, count) => sum + count, 0n);

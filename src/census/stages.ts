@@ -11,6 +11,7 @@ import { listFlats } from '../flat/lattice.js';
 import type { RegionTable } from '../region/regions.js';
 import { listRegions } from '../region/regions.js';
 import { examineRegions, type RegionEvidence } from './evidence.js';
+import { estimateMoebiusSeconds } from './moebius-estimate.js';
 
 /** Told how far a computation is, now and then. */
 export type PartListener = (done: number, total: number) => void;
@@ -31,6 +32,7 @@ export interface Stages {
   ) => readonly bigint[];
   readonly listFlats: (arrangement: Arrangement, onFlats: PartListener) => FlatLattice;
   readonly polynomialByFlats: (lattice: FlatLattice) => readonly bigint[];
+  readonly estimateMoebius: (lattice: FlatLattice) => number;
   readonly facesByMoebius: (lattice: FlatLattice) => readonly bigint[];
   readonly listRegions: (arrangement: Arrangement) => RegionTable;
   /** Looks at every listed region on its own; null where that would take long. */
@@ -47,6 +49,7 @@ export const standardStages: Stages = {
   listFlats: (arrangement, onFlats) =>
     listFlats(arrangement, { onProgress: ({ done, of }) => onFlats(done, of) }),
   polynomialByFlats: characteristicPolynomialByFlats,
+  estimateMoebius: estimateMoebiusSeconds,
   facesByMoebius: faceCountsByMoebius,
   listRegions,
   examineRegions,

@@ -14,6 +14,7 @@ import { multiplyPolynomials } from '../../src/exact/polynomial.js';
 import { reflectionArrangement } from '../../src/input/families/reflection.js';
 import { allSubsets } from '../../src/input/families/subsets.js';
 import { readGenerators } from '../../src/input/read.js';
+import { secondsPerIntervalStep } from '../../src/limits.js';
 
 async function arrangementOf(text: string) {
   return buildArrangement(await readGenerators(new TextEncoder().encode(text), 'normals.txt'));
@@ -175,6 +176,35 @@ describe('the choice of routes', () => {
     expect(record.run.notRun.map(({ route }) => route)).toEqual([
       'polynomial by deletion-restriction',
     ]);
+  });
+
+  it('leaves out the faces by Moebius values where only they are too dear', () => {
+    const stages: Stages = { ...standardStages, estimateMoebius: () => 1000 };
+    const record = takeCensus(B3, { stages });
+    expect(record.flats).toEqual(['1', '9', '13', '1']);
+    expect(record.faces).toBeNull();
+    expect(record.properties).toMatchObject({ simplicial: null, supersolvable: true });
+    expect(record.run.notRun.map(({ route }) => route)).toEqual([
+      'faces by Moebius values',
+      'faces by listing',
+    ]);
+    expect(recordSchema.parse(record).zonotope.faces).toBeNull();
+  });
+
+  it('foretells the walk of the lattice within a factor of four', () => {
+    // Slow obvious count: for each flat, the covers inside the flats that it contains or equals.
+    const A5 = buildArrangement(reflectionArrangement('A5'));
+    const lattice = standardStages.listFlats(A5, () => {});
+    const { flatCount, zero, coverOffsets } = lattice;
+    let covers = 0;
+    for (let x = 0; x < flatCount; x++) {
+      for (let y = 0; y < flatCount; y++) {
+        if ((zero[x] & ~zero[y]) === 0) covers += coverOffsets[y + 1] - coverOffsets[y];
+      }
+    }
+    const ratio = standardStages.estimateMoebius(lattice) / (covers * secondsPerIntervalStep);
+    expect(ratio).toBeGreaterThan(0.25);
+    expect(ratio).toBeLessThan(4);
   });
 
   it('gives up where no way is worth waiting for, and says what would be needed', () => {
