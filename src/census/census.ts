@@ -17,6 +17,8 @@ import type { CensusRecord, Check } from './record.js';
 import { runRoutes } from './routes.js';
 import { type Stages, standardStages } from './stages.js';
 import { version } from './version.js';
+import { measureZonotope } from './zonotope-measure.js';
+import { measureChecks, measuresOf } from './zonotope-record.js';
 
 export interface CensusOptions {
   /** Seconds a route may take by estimate; the cheapest way to the polynomial may take longer. */
@@ -41,12 +43,9 @@ export function takeCensus(arrangement: Arrangement, options: CensusOptions = {}
     secondsPerRoute: options.secondsPerRoute ?? defaultRouteSeconds,
     memoryBytes: options.memoryBytes ?? defaultMemoryBytes,
   };
-  const found = runRoutes(
-    arrangement,
-    limits,
-    options.stages ?? standardStages,
-    options.listener ?? silentListener,
-  );
+  const stages = options.stages ?? standardStages;
+  const listener = options.listener ?? silentListener;
+  const found = runRoutes(arrangement, limits, stages, listener);
   const { lattice } = found;
   const polynomial = (found.polynomialByDeletion ?? found.polynomialByFlats)!;
   const faces = found.facesByListing ?? found.facesByMoebius;
@@ -54,7 +53,13 @@ export function takeCensus(arrangement: Arrangement, options: CensusOptions = {}
   const { properties, notes } = propertiesOf(arrangement, polynomial, roots, lattice, faces);
   if (faces === null) notes.push('faces: the routes that count them were too dear');
   if (lattice === null) notes.push('flats: the route that lists them was too dear');
-  notes.push('volume, Ehrhart polynomial, lattice points: not computed by this version');
+  const measure = measureZonotope(arrangement, lattice, {
+    secondsPerRoute: limits.secondsPerRoute,
+    listener,
+    stages: stages.zonotope,
+  });
+  const { measures, notes: measureNotes } = measuresOf(arrangement, measure);
+  notes.push(...measureNotes);
 
   const ambient = inAmbientSpace(arrangement, polynomial);
   const faceCounts = faces?.map(String) ?? null;
@@ -82,18 +87,18 @@ export function takeCensus(arrangement: Arrangement, options: CensusOptions = {}
     properties,
     zonotope: {
       faces: faceCounts && [...faceCounts].reverse(),
-      volume: null,
-      ehrhart: null,
-      latticePoints: null,
-      interiorPoints: null,
+      ...measures,
     },
-    checks: checksOf(arrangement, found),
+    checks: [
+      ...checksOf(arrangement, found),
+      ...measureChecks(arrangement, measure, lattice, found.facesByListing?.[1] ?? null),
+    ],
     lists: [],
     run: {
       version,
       seconds: Number(((performance.now() - started) / 1000).toFixed(3)),
       threads: 1,
-      notRun: [...found.notRun],
+      notRun: [...found.notRun, ...measure.notRun],
     },
     notes,
   };

@@ -10,12 +10,11 @@ import {
   regionsByMultiplicities,
   simplicialByMultiplicities,
 } from './closed-forms.js';
+import { compare } from './compare.js';
 import { regionsFromPolynomial } from './polynomial.js';
 import { isGeneric, isSimplicial, multiplicities } from './properties.js';
 import type { Check } from './record.js';
 import type { Findings } from './routes.js';
-
-type Value = bigint | string | null;
 
 /** All checks that the findings allow, in the order they are read. */
 export function checksOf(arrangement: Arrangement, found: Findings): Check[] {
@@ -76,15 +75,6 @@ export function checksOf(arrangement: Arrangement, found: Findings): Check[] {
       ['distinct and extreme', found.evidence?.extremes ?? null],
     ]),
   ].filter((check) => check !== null);
-}
-
-/** Null unless two routes or more have a value. */
-function compare(claim: string, routes: readonly (readonly [string, Value])[]): Check | null {
-  const known = routes.flatMap(([route, value]) =>
-    value === null ? [] : [{ route, value: String(value) }],
-  );
-  if (known.length < 2) return null;
-  return { claim, routes: known, agrees: known.every(({ value }) => value === known[0].value) };
 }
 
 function list(counts: readonly bigint[] | null): string | null {

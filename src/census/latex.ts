@@ -74,7 +74,7 @@ export function formatLatex(record: CensusRecord): string {
       `${plural(arrangement.hyperplanes, 'hyperplane')} of rank ${arrangement.rank}, ` +
       `${number(record.regions)} regions. ` +
       `$\\chi(t) = ${grouped(chi, '{,}')} = ${grouped(factors, '{,}')}$. ` +
-      `The arrangement is ${answers.join(', ')}.${multiplicity}}`,
+      `The arrangement is ${answers.join(', ')}.${multiplicity}${measured(record)}}`,
     '\\end{table}',
     '',
     '\\begin{table}',
@@ -96,6 +96,25 @@ export function formatLatex(record: CensusRecord): string {
     ...(needsCaution(record) ? ['', escapeLatex(caution)] : []),
   ];
   return `${lines.join('\n')}\n`;
+}
+
+/** A sentence on the zonotope's measure; empty where it was not had. */
+function measured({ zonotope }: CensusRecord): string {
+  const { volume, ehrhart, latticePoints, interiorPoints, scale } = zonotope;
+  const parts: string[] = [];
+  if (volume !== null)
+    parts.push(`volume $${grouped(volume, '{,}').replace(/\*?sqrt\((\d+)\)/g, '\\sqrt{$1}')}$`);
+  if (ehrhart !== null) {
+    const polynomial = grouped(formatPolynomialLatex(ehrhart.map(BigInt)), '{,}');
+    parts.push(`Ehrhart polynomial $${polynomial}$`);
+  }
+  if (latticePoints !== null) {
+    parts.push(`${number(latticePoints)} lattice points, ${number(interiorPoints)} of them inside`);
+  }
+  if (parts.length === 0) return '';
+  const scaled =
+    scale === null || scale === '1' ? '' : ` (the last of the zonotope scaled by ${scale})`;
+  return ` Zonotope: ${parts.join('; ')}${scaled}.`;
 }
 
 /** Polynomials are set as mathematics; lists of counts as they are. */

@@ -11,6 +11,7 @@ import {
   titleOf,
   total,
 } from './wording.js';
+import { measureRows } from './zonotope-wording.js';
 
 /** Text of the input with everything Markdown or HTML could read as markup escaped. */
 export function escapeMarkdown(text: string): string {
@@ -42,6 +43,7 @@ export function formatMarkdown(record: CensusRecord): string {
     shown(row.zonotopeFaces),
   ]);
   const { linesByMultiplicity } = record.properties;
+  const measures = measureRows(record.zonotope, arrangement.rank, input.ambientDimension);
   const blocks: string[][] = [
     [`# ${escapeMarkdown(titleOf(record))}`],
     [
@@ -58,6 +60,7 @@ export function formatMarkdown(record: CensusRecord): string {
       ['property', 'answer'],
       propertyRows(record).map(([name, text]) => [name, text]),
     ),
+    measures.length === 0 ? [] : tableOf(['zonotope', 'value'], measures),
     linesByMultiplicity === null
       ? []
       : tableOf(

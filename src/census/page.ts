@@ -22,6 +22,7 @@ import {
   titleOf,
   total,
 } from './wording.js';
+import { measureRows } from './zonotope-wording.js';
 
 /** Columns of the terms on the left of a line. */
 const termColumns = 16;
@@ -148,6 +149,10 @@ function zonotope(record: CensusRecord): string[] {
   lines.push(...term('vertices', grouped(faces?.[0] ?? record.regions)));
   if (faces !== null && rank >= 2) lines.push(...term('edges', grouped(faces[1])));
   if (faces !== null && rank >= 3) lines.push(...term('facets', grouped(faces[rank - 1])));
+  const { ambientDimension } = record.input;
+  for (const [name, text] of measureRows(record.zonotope, rank, ambientDimension)) {
+    lines.push(...term(name, unbroken(text)));
+  }
   return lines;
 }
 

@@ -53,10 +53,26 @@ const properties = z.strictObject({
 
 const zonotope = z.strictObject({
   faces: z.array(natural).nullable().describe('by dimension 0..rank; vertices first'),
-  volume: number.nullable(),
-  ehrhart: z.array(number).nullable(),
+  volume: number
+    .nullable()
+    .describe('relative to the lattice of the span; over Q(sqrt(k)), to its basis'),
+  euclideanVolume: z
+    .strictObject({ square: number, decimal: z.string() })
+    .nullable()
+    .describe('its square, exact, and 15 digits of it'),
+  scale: natural
+    .nullable()
+    .describe('what the generators are multiplied by for all that follows, to be integer'),
+  ehrhart: z.array(number).nullable().describe('from t^0 up; null where it is a quasi-polynomial'),
+  quasiPolynomial: z
+    .array(z.strictObject({ divisor: natural, coefficients: z.array(number) }))
+    .nullable()
+    .describe('the polynomial for the t whose greatest common divisor with the period is divisor'),
   latticePoints: natural.nullable(),
   interiorPoints: natural.nullable(),
+  boundaryPoints: natural.nullable(),
+  elementaryDivisors: z.array(natural).nullable().describe('of the matrix of generators'),
+  sublatticeIndex: natural.nullable().describe('of the lattice that the generators span'),
 });
 
 const check = z.strictObject({

@@ -12,6 +12,7 @@ import type { RegionTable } from '../region/regions.js';
 import { listRegions } from '../region/regions.js';
 import { examineRegions, type RegionEvidence } from './evidence.js';
 import { estimateMoebiusSeconds } from './moebius-estimate.js';
+import { standardZonotopeStages, type ZonotopeStages } from './zonotope-measure.js';
 
 /** Told how far a computation is, now and then. */
 export type PartListener = (done: number, total: number) => void;
@@ -39,6 +40,8 @@ export interface Stages {
   readonly examineRegions: (arrangement: Arrangement, table: RegionTable) => RegionEvidence | null;
   /** Faces by dimension 0..rank, counted as they stream past. */
   readonly countFaces: (arrangement: Arrangement) => readonly number[];
+  /** Volume, Ehrhart polynomial and facets. */
+  readonly zonotope: ZonotopeStages;
 }
 
 export const standardStages: Stages = {
@@ -54,4 +57,5 @@ export const standardStages: Stages = {
   listRegions,
   examineRegions,
   countFaces,
+  zonotope: standardZonotopeStages,
 };

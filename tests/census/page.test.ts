@@ -81,7 +81,7 @@ describe('the page', () => {
     const wrong: Partial<Stages> = { countFaces: () => [1, 26, 70, 48] };
     const stages = { ...standardStages, ...wrong };
     const page = formatPage(takeCensus(buildArrangement(reflectionArrangement('B3')), { stages }));
-    expect(page).toMatch(/^Checks: 3 of 8 DISAGREE$/m);
+    expect(page).toMatch(/^Checks: 3 of 13 DISAGREE$/m);
     expect(page).toMatch(/^ {2}faces by dimension +DISAGREE$/m);
     expect(page).toMatch(/^ {4}listing +1 26 70 48$/m);
     expect(page).toMatch(/^ {4}Moebius values of flats +1 26 72 48$/m);
