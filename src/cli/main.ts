@@ -4,7 +4,9 @@ import { checkOrder } from './order.js';
 import { buildProgram } from './program.js';
 
 /** Runs one command; never rejects. */
-export async function main(args: readonly string[]): Promise<void> {
+export async function main(words: readonly string[]): Promise<void> {
+  // `help make` is read as `make --help`.
+  const args = words[0] === 'help' ? [...words.slice(1), '--help'] : words;
   const program = buildProgram();
   const commands = program.commands.map((command) => command.name());
   const command = commands.find((name) => name === args[0]);

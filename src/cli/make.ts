@@ -59,8 +59,9 @@ export function addMake(program: Command): void {
     .usage('FAMILY [parameters] [options]')
     .helpCommand(false)
     .addHelpText('after', after);
-  const family = (usage: string, summary: string): Command =>
-    make
+  const seed = '--seed <n>';
+  const family = (usage: string, summary: string): Command => {
+    const command = make
       .command(usage, { hidden: true })
       .description(summary)
       .option('-o, --out <file>', 'write to a file; its ending picks the format')
@@ -72,6 +73,10 @@ export function addMake(program: Command): void {
       .addOption(acceptedOption('--threads <n>').argParser(readThreads))
       .addOption(acceptedOption('--memory <size>').argParser(readMemory))
       .addOption(acceptedOption('-q, --quiet'));
+    if (usage === 'random')
+      return command.option(seed, 'an integer (default: 1)', readInteger('--seed'));
+    return command.addOption(acceptedOption(seed).argParser(readInteger('--seed')));
+  };
 
   family('reflection <type>', 'Reflection arrangement of a type, as A4, B3, E7, H4 or I2(8).')
     .addHelpText('after', after.slice(after.indexOf('\nTYPE'), after.indexOf('\n\nExamples')))
@@ -108,7 +113,6 @@ export function addMake(program: Command): void {
     .requiredOption('--rank <r>', 'rank, and number of coordinates', readWhole('--rank', 1))
     .requiredOption('--normals <n>', 'how many', readWhole('--normals', 1))
     .requiredOption('--bound <b>', 'entries run from -b to b', readInteger('--bound'))
-    .option('--seed <s>', 'an integer (default: 1)', readInteger('--seed'))
     .action(makeRandom);
   family('polar-zonohedron <zones>', 'Rational points of a circle, on a cone.').action(
     async (zones: string, flags: MakeFlags) => {

@@ -62,7 +62,7 @@ export function chooseFormat(options: CommonOptions, formats: readonly string[])
       `take ${either(formats)}`,
     );
   }
-  if (out === undefined || out.startsWith('/dev/')) return formats[0];
+  if (out === undefined || out === '-' || out.startsWith('/dev/')) return formats[0];
   const ending = /\.([A-Za-z]+)$/.exec(out)?.[1]?.toLowerCase() ?? '';
   const fitting = endings[ending]?.find((name) => formats.includes(name));
   if (fitting !== undefined) return fitting;

@@ -42,7 +42,7 @@ const laterPictures = ['sphere', 'lines', 'zonotope', 'tiling', 'region-graph'];
 export function checkOrder(args: readonly string[], commands: readonly string[]): void {
   const words = args.filter((arg) => !arg.startsWith('-') || arg === '-');
   const [first, second] = words;
-  if (first === undefined || first === 'help') return;
+  if (first === undefined) return;
   const known = (word: string | undefined): boolean =>
     word !== undefined && commands.includes(word);
   if (!known(first)) {

@@ -23,9 +23,9 @@ export class Destination {
     process.exit(130);
   };
 
-  /** `file` null is standard output. */
+  /** `file` null or `-` is standard output. */
   constructor(file: string | null) {
-    this.#file = file;
+    this.#file = file === '-' ? null : file;
     if (file?.endsWith('/')) throw new InputError(`${file} is a folder`, 'name a file in it');
   }
 

@@ -31,6 +31,10 @@ describe('help', () => {
     for (const [name] of commands.slice(1, 9)) expect(help).toMatch(new RegExp(`^  ${name} `, 'm'));
   });
 
+  it('comes by the word help too', () => {
+    expect(place.output(['help', 'draw', 'hasse'])).toBe(place.output(['draw', 'hasse', '--help']));
+  });
+
   it('of make says the coordinates of every type, and lists the families', () => {
     const help = place.output(['make', '--help']);
     for (const word of [

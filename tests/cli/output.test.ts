@@ -68,6 +68,13 @@ describe('--out', () => {
     expect(existsSync('/dev/null')).toBe(true);
   });
 
+  it('takes - for standard output, and options that mean the same everywhere', () => {
+    const plain = place.output(['regions', 'four.txt']);
+    const common = ['--threads', '1', '--memory', '1GB', '--quiet', '--seed', '7'];
+    expect(place.output(['regions', 'four.txt', '--out', '-', ...common])).toBe(plain);
+    place.output(['make', 'reflection', 'A2', ...common]);
+  });
+
   it('writes no progress where standard error is not a terminal', () => {
     expect(place.run(['regions', 'four.txt', '-o', 'quiet.csv'])).toMatchObject({
       status: 0,
