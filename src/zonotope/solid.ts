@@ -3,12 +3,13 @@
 // in the order of their directions in its plane, then back along each (P. McMullen, 1971, On
 // zonotopes).
 //
-// Order. Vertex v belongs to region v in the list of regions: rows of the half, then their negations.
+// Order. Vertex v belongs to region v in the list of regions: the rows of the half, each followed by
+// its negation.
 // Faces come as facetsOf gives them, two and two opposite. The vertices of a face go counterclockwise
 // seen from outside, the least first.
 
 import type { Arrangement } from '../arrangement/arrangement.js';
-import { bitAt } from '../bits/signs.js';
+import { bitAt, fullMask } from '../bits/signs.js';
 import { InputError, LimitError } from '../errors.js';
 import type { ExactNumber } from '../exact/number.js';
 import type { Ring } from '../exact/ring.js';
@@ -89,17 +90,15 @@ function tooMany(estimate: string): LimitError {
   );
 }
 
-/** The sign word of every region in the order of the list. */
+/** The sign word of every region in the order of the list: each row followed by its negation. */
 export function wordsOf(regions: RegionTable): Int32Array[] {
   const { half, hyperplanes } = regions;
   const W = half.wordsPerRow;
-  const spare = hyperplanes & 31;
+  const mask = fullMask(hyperplanes);
   return Array.from({ length: regionCount(regions) }, (_, v) => {
-    const row = v < half.rows ? v : v - half.rows;
-    const word = half.words.slice(row * W, (row + 1) * W);
-    if (v < half.rows) return word;
-    for (let w = 0; w < W; w++) word[w] = ~word[w];
-    if (spare !== 0) word[W - 1] &= (1 << spare) - 1;
+    const row = (v >> 1) * W;
+    const word = half.words.slice(row, row + W);
+    if (v % 2 === 1) for (let w = 0; w < W; w++) word[w] = ~word[w] & mask[w];
     return word;
   });
 }
