@@ -63,3 +63,12 @@ export const directCountSeconds = 0.5;
 
 /** Faces of the surface of a zonotope in space: seconds, and files of some 100 MB. */
 export const surfaceFaces = 250_000;
+
+/** Tiles that a list may have: about a gigabyte of text. */
+export const listedTiles = 10_000_000;
+
+/** Faces of a solid, sides of a polygon or tiles that a picture holds: past it, ink alone. */
+export const drawnFaces = 10_000;
+
+/** Seconds the cheapest route to volume and Ehrhart polynomial may take where these are asked for. */
+export const measurePatienceSeconds = 900;

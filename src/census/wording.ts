@@ -14,7 +14,12 @@ export function needsCaution({ input }: CensusRecord): boolean {
 
 /** The title, or the name of the file without its folders where there is none. */
 export function titleOf({ input }: CensusRecord): string {
-  return input.title ?? input.source.replace(/^.*[/\\](?=.)/, '');
+  return titleWords(input.title, input.source);
+}
+
+/** The same from its parts. */
+export function titleWords(title: string | null, source: string): string {
+  return title ?? source.replace(/^.*[/\\](?=.)/, '');
 }
 
 export function plural(count: number, noun: string): string {

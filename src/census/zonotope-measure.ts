@@ -16,7 +16,6 @@ import { ehrhartBySubsets, estimateSubsets } from '../zonotope/ehrhart-by-subset
 import { type EhrhartTerms, latticeVolume } from '../zonotope/ehrhart-terms.js';
 import { type Facet, facetsOf } from '../zonotope/facets.js';
 import {
-  centredGenerators,
   type LatticeGenerators,
   latticeGenerators,
   latticeObstacle,
@@ -84,10 +83,10 @@ export interface Measure {
 
 export interface MeasureOptions {
   readonly secondsPerRoute: number;
+  /** Seconds that the cheapest route may take by estimate, when that is more. */
+  readonly patienceSeconds?: number;
   readonly listener: CensusListener;
   readonly stages: ZonotopeStages;
-  /** Measures the zonotope moved so that its centre is the origin. */
-  readonly centred?: boolean;
 }
 
 interface Route<T> {
@@ -125,8 +124,7 @@ export function measureZonotope(
     const volumes = runAffordable('volume', volumeRoutes, options, notRun, faults);
     return { obstacle, generators: null, ehrhart: [], volumes, counted: [], faults, notRun };
   }
-  const plain = latticeGenerators(arrangement);
-  const generators = options.centred ? centredGenerators(plain) : plain;
+  const generators = latticeGenerators(arrangement);
   const routes = ehrhartRoutes(arrangement, generators, lattice, stages);
   if (lattice === null) {
     notRun.push({ route: 'Ehrhart polynomial by flats', why: 'the flats were not listed' });
@@ -188,7 +186,7 @@ function ehrhartRoutes(
 function runAffordable<T>(
   what: string,
   routes: readonly Route<T>[],
-  { secondsPerRoute, listener }: MeasureOptions,
+  { secondsPerRoute, patienceSeconds = 0, listener }: MeasureOptions,
   notRun: NotRun[],
   faults: { route: string; why: string }[],
 ): { route: string; value: T }[] {
@@ -196,7 +194,8 @@ function runAffordable<T>(
   for (const route of [...routes].sort((a, b) => a.seconds - b.seconds)) {
     const { name, seconds, total } = route;
     const enough = found.length >= 2;
-    if (seconds <= (enough ? Math.min(quickRouteSeconds, secondsPerRoute) : secondsPerRoute)) {
+    const most = found.length === 0 ? Math.max(patienceSeconds, secondsPerRoute) : secondsPerRoute;
+    if (seconds <= (enough ? Math.min(quickRouteSeconds, most) : most)) {
       listener.stage(`${what} by ${name}, about ${formatSeconds(seconds)}`);
       try {
         found.push({ route: name, value: route.run((done) => listener.part(done, total)) });
@@ -223,7 +222,7 @@ function countDirectly(
   arrangement: Arrangement,
   generators: LatticeGenerators,
   lattice: FlatLattice,
-  { listener, stages, centred }: MeasureOptions,
+  { listener, stages }: MeasureOptions,
 ): Measure['counted'] {
   // Lines through the box of the first dilate times inequalities, before any facet is made.
   const sides = generators.corner.map((_, c) =>
@@ -234,7 +233,7 @@ function countDirectly(
   if (lines * facetCount * 3e-9 > directCountSeconds) return [];
   listener.stage('lattice points one by one');
   const facets = [...stages.facetsOf(arrangement, lattice)] as Facet<bigint>[];
-  const points = new DirectPoints(arrangement, facets, { centred: centred === true });
+  const points = new DirectPoints(arrangement, facets);
   const counted: { dilate: number; points: bigint; interior: bigint }[] = [];
   for (const dilate of [1, 2, 3]) {
     const whole = dilate * Number(generators.scale);

@@ -4,7 +4,7 @@ import { formatPolynomial } from '../exact/polynomial.js';
 import { grouped } from './layout.js';
 import type { CensusRecord } from './record.js';
 
-type Fields = CensusRecord['zonotope'];
+type Fields = Omit<CensusRecord['zonotope'], 'faces'>;
 
 /** Volume and lattice results as terms with their text; those that are null are left out. */
 export function measureRows(zonotope: Fields, rank: number, dimension: number): [string, string][] {
@@ -13,10 +13,14 @@ export function measureRows(zonotope: Fields, rank: number, dimension: number): 
     zonotope;
   const scaled = scale !== null && scale !== '1';
   if (volume !== null) {
+    const about =
+      rank === dimension && /[/s]/.test(volume) && euclideanVolume !== null
+        ? `, about ${euclideanVolume.decimal}`
+        : '';
     const unit = scale === null ? 'a basis' : 'the lattice';
     rows.push([
       'volume',
-      `${grouped(volume)}${rank === dimension ? '' : `, relative to ${unit} of the span`}`,
+      `${grouped(volume)}${about}${rank === dimension ? '' : `, relative to ${unit} of the span`}`,
     ]);
   }
   if (euclideanVolume !== null && rank < dimension) {

@@ -22,7 +22,6 @@ const wordFirst: Record<string, { readonly noun: string; readonly words: readonl
 
 /** Commands of the trade that this version does not have. */
 const later = [
-  'zonotope',
   'symmetry',
   'report',
   'locate',

@@ -10,6 +10,7 @@ import { addFlats } from './flats.js';
 import { addMake } from './make.js';
 import { addPolynomial } from './polynomial.js';
 import { addRegions } from './regions.js';
+import { addZonotope } from './zonotope.js';
 
 const about = `
 Regions, faces, flats, characteristic polynomial and zonotope of a central
@@ -46,6 +47,7 @@ export function buildProgram(): Command {
     addFaces,
     addFlats,
     addPolynomial,
+    addZonotope,
     addCrosscheck,
     addDraw,
     addMake,

@@ -27,6 +27,17 @@ export function faceCountsByMoebius(lattice: FlatLattice): bigint[] {
   return counts;
 }
 
+/** For each flat of rank k, in order, the regions of the restriction to it: the faces that span it. */
+export function faceCountsOfRank(lattice: FlatLattice, k: number): bigint[] {
+  const { rankOffsets } = lattice;
+  const walk = new IntervalWalk(lattice);
+  return Array.from({ length: rankOffsets[k + 1] - rankOffsets[k] }, (_, i) => {
+    const flat = rankOffsets[k] + i;
+    const plain = walk.regionsAbove(flat);
+    return plain === null ? walk.exactRegionsAbove(flat) : BigInt(plain);
+  });
+}
+
 /** Walks upper intervals; the marks of one walk are told from those of another by their stamp. */
 class IntervalWalk {
   private readonly lattice: FlatLattice;
