@@ -68,7 +68,7 @@ export function* gltfPieces(solid: Solid): Generator<string> {
     }
   }
   const edgeMaterial = shapes.length;
-  const names = classNames(solid);
+  const names = classNames(projection);
   const document = {
     asset: { version: '2.0', generator: 'signwright' },
     scene: 0,
@@ -80,7 +80,9 @@ export function* gltfPieces(solid: Solid): Generator<string> {
         children: [1, 2],
         extras: {
           notes: meshNotes(solid),
-          normals: projection.arrangement.generators.normals.map((_, j) => generatorName(solid, j)),
+          normals: projection.arrangement.generators.normals.map((_, j) =>
+            generatorName(projection, j),
+          ),
           precision: 'positions are rounded further, to 32-bit floats, as the format asks',
         },
       },

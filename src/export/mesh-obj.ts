@@ -13,7 +13,7 @@ export function* objLines(solid: Solid): Generator<string> {
   for (let i = 0; i < placed.length; i += 3) {
     yield `v ${placed[i]} ${placed[i + 1]} ${placed[i + 2]}\n`;
   }
-  const words = classWords(solid);
+  const words = classWords(solid.projection);
   let group = '';
   for (const { vertices, along } of solid.faces) {
     const own = [...new Set(along)].sort((a, b) => a - b).map((h) => words[h]);

@@ -3,6 +3,7 @@
 import { version } from '../census/version.js';
 import { formatNumber } from '../exact/number.js';
 import type { Solid } from '../zonotope/solid.js';
+import type { Projection } from '../zonotope/solid-projection.js';
 import { titleOf } from './heading.js';
 import { cleanText } from './xml.js';
 
@@ -32,34 +33,33 @@ export function solidTitle(solid: Solid): string {
 }
 
 /** `3 drive port`: generators of the projected arrangement as the file numbers and names them. */
-export function generatorName(solid: Solid, generator: number): string {
-  const { kept, arrangement } = solid.projection;
+export function generatorName({ kept, arrangement }: Projection, generator: number): string {
   const label = arrangement.generators.labels?.[generator] ?? null;
   return oneLine(`${kept[generator] + 1} ${label ?? ''}`);
 }
 
 /** The same for all generators of each hyperplane: `1 a + 4 b`. */
-export function classNames(solid: Solid): string[] {
-  const { hyperplanes } = solid.projection.arrangement;
-  return hyperplanes.map(({ members }) => members.map((j) => generatorName(solid, j)).join(' + '));
+export function classNames(projection: Projection): string[] {
+  return projection.arrangement.hyperplanes.map(({ members }) =>
+    members.map((j) => generatorName(projection, j)).join(' + '),
+  );
 }
 
 /** A word for each hyperplane that any format takes: `n1_a+n4_b`; no two are alike. */
-export function classWords(solid: Solid): string[] {
-  const word = (j: number): string =>
-    `n${generatorName(solid, j)
-      .replace(/[^\p{L}\p{N}.-]+/gu, '_')
-      .replace(/_$/, '')}`;
-  return solid.projection.arrangement.hyperplanes.map(({ members }) => members.map(word).join('+'));
+export function classWords(projection: Projection): string[] {
+  const word = (j: number): string => {
+    const name = generatorName(projection, j);
+    return `n${name.replace(/[^\p{L}\p{N}.-]+/gu, '_').replace(/_$/, '')}`;
+  };
+  return projection.arrangement.hyperplanes.map(({ members }) => members.map(word).join('+'));
 }
 
 /** Lines that explain the file, for its comments. */
 export function meshNotes(solid: Solid): string[] {
   const { projection, vertices, edges, faces } = solid;
-  const { axes, from, arrangement } = projection;
-  const whole = projection.kept.length === arrangement.generators.normals.length;
+  const { axes, from, kept } = projection;
   const projected = from.rank > 3 ? ' of the projected normals' : '';
-  const { radicand, normals } = arrangement.generators;
+  const { radicand, normals } = from.generators;
   const names = axes.map(({ name, measure }) =>
     oneLine(measure === null ? name : `${name} ${measure}`),
   );
@@ -74,11 +74,9 @@ export function meshNotes(solid: Solid): string[] {
     'Faces go counterclockwise seen from outside, two and two opposite',
     'Numbers are the exact ones rounded to the nearest double, in the fewest digits that tell it',
     'Geometry of the model given, not a rating',
-    ...normals.map(
-      (normal, j) =>
-        `Normal ${generatorName(solid, j)}: ${normal.map((x) => formatNumber(x, radicand)).join(' ')}${
-          whole ? '' : ' (projected)'
-        }`,
-    ),
+    ...kept.map((of, j) => {
+      const normal = normals[of].map((x) => formatNumber(x, radicand)).join(' ');
+      return `Normal ${generatorName(projection, j)}: ${normal}`;
+    }),
   ];
 }

@@ -39,3 +39,12 @@ export function faceRole(k: number, r: number): FaceRole {
   if (k === r - 1) return 'wall';
   return k === 1 ? 'ray' : 'between';
 }
+
+/** Tints of polygons with 4, 6, 8, 10 and more sides, which mesh files share. */
+export { sideTints } from '../export/mesh-words.js';
+
+/** Lines that run along one normal each; the numbers beside them tell more than five apart. */
+export const normalInks = ['#1f2328', '#0067b3', '#c04000', '#2d8a4e', '#a0489c'] as const;
+
+/** What the reader asked to see marked. */
+export const mark: Tint = { fill: '#c8102e', stroke: '#7a0a1c' };

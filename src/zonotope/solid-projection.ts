@@ -46,8 +46,8 @@ export interface Projection {
   readonly arrangement: Arrangement;
   /** For each generator of `arrangement` the 0-based generator it is the image of. */
   readonly kept: readonly number[];
-  /** Rank and dimension of the zonotope that was projected. */
-  readonly from: { readonly rank: number; readonly dimension: number };
+  /** The arrangement that was projected. */
+  readonly from: Arrangement;
 }
 
 /**
@@ -96,7 +96,7 @@ export function readProjection(
  */
 export function projectArrangement(arrangement: Arrangement, choice: ProjectionChoice): Projection {
   const { rank, dimension, generators } = arrangement;
-  const from = { rank, dimension };
+  const from = arrangement;
   if (choice.kind === 'own') {
     if (rank === 1) {
       throw new InputError('rank 1: the zonotope is a segment', 'give normals of rank 2 or more');

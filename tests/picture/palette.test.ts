@@ -4,7 +4,17 @@
 // deficiency, IEEE Trans. Vis. Comput. Graph. 15, table for severity 1 (from memory), difference by
 // CIE 1976 L*a*b*.
 import { describe, expect, it } from 'vitest';
-import { faceRole, faceTints, ink, line, page, softInk } from '../../src/picture/palette.js';
+import {
+  faceRole,
+  faceTints,
+  ink,
+  line,
+  mark,
+  normalInks,
+  page,
+  sideTints,
+  softInk,
+} from '../../src/picture/palette.js';
 
 type Triple = readonly number[];
 
@@ -82,6 +92,7 @@ describe('contrast', () => {
     for (const { fill } of Object.values(faceTints)) {
       expect(contrast(ink, fill)).toBeGreaterThanOrEqual(7);
     }
+    for (const fill of sideTints) expect(contrast(ink, fill)).toBeGreaterThanOrEqual(7);
     expect(contrast(ink, page)).toBeGreaterThanOrEqual(7);
     expect(contrast(softInk, page)).toBeGreaterThanOrEqual(7);
   });
@@ -90,6 +101,9 @@ describe('contrast', () => {
     for (const { stroke } of Object.values(faceTints)) {
       expect(contrast(stroke, page)).toBeGreaterThanOrEqual(3);
     }
+    for (const colour of [...normalInks, mark.fill, mark.stroke]) {
+      expect(contrast(colour, page)).toBeGreaterThanOrEqual(3);
+    }
     expect(contrast(line, page)).toBeGreaterThanOrEqual(3);
   });
 });
@@ -97,8 +111,12 @@ describe('contrast', () => {
 describe.each(visions)('tints for eyes with %s', (_, matrix) => {
   // A difference of 2.3 is just noticeable (M. Mahy, L. Van Eycken, A. Oosterlinck, 1994); three
   // times that is plain in neighbouring patches.
-  it('stay apart', () => {
-    const tints = Object.values(faceTints).map(({ fill }) => lab(times(matrix, linear(fill))));
+  it.each([
+    ['faces of a poset', Object.values(faceTints).map(({ fill }) => fill)],
+    ['faces of a solid', sideTints],
+    ['edges of a solid', normalInks],
+  ] as [string, readonly string[]][])('stay apart: %s', (_name, colours) => {
+    const tints = colours.map((colour) => lab(times(matrix, linear(colour))));
     tints.forEach((a, i) => {
       for (const b of tints.slice(0, i)) {
         expect(Math.hypot(...a.map((x, k) => x - b[k]))).toBeGreaterThan(6.9);
