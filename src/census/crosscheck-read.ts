@@ -2,11 +2,12 @@
 // and -, or both in one table. Any order of rows, header optional, commas, semicolons, tabs or blanks.
 import type { Arrangement } from '../arrangement/arrangement.js';
 import { setBit, WordTable, wordsFor } from '../bits/signs.js';
-import { InputError, type Position } from '../errors.js';
+import { InputError } from '../errors.js';
 import type { ExactNumber } from '../exact/number.js';
-import { differentRoots, isNumber, NumberFault, parseNumber } from '../input/number-text.js';
+import { isNumber } from '../input/number-text.js';
 import { quoted, SourceText, shownName } from '../input/source.js';
 import { PointSet } from './crosscheck-points.js';
+import { type Row, TableText } from './crosscheck-table.js';
 
 /** Sign vectors, packed over hyperplanes. */
 export interface SignList {
@@ -27,12 +28,6 @@ export interface TheirList {
   readonly signs: SignList | null;
 }
 
-/** A row of cells and the line it ends on, 1-based. */
-interface Row {
-  readonly cells: readonly string[];
-  readonly line: number;
-}
-
 const signsPattern = /^[+\-\u22120]*[+\-\u2212][+\-\u22120]*$/;
 
 function isSigns(cell: string): boolean {
@@ -49,8 +44,7 @@ export async function readTheirList(
   if (!bytes.some((byte) => byte > 32)) {
     throw new InputError('the list is empty', 'give a vertex or a sign vector a line', { file });
   }
-  const source = new SourceText(bytes, name);
-  const reader = new ListReader(source, arrangement);
+  const reader = new ListReader(new TableText(new SourceText(bytes, name)), arrangement);
   await reader.read();
   return { name: file, vertices: reader.vertices, signs: reader.signs };
 }
@@ -58,9 +52,8 @@ export async function readTheirList(
 class ListReader {
   vertices: PointSet | null = null;
   signs: SignList | null = null;
-  private readonly source: SourceText;
+  private readonly source: TableText;
   private readonly arrangement: Arrangement;
-  private delimiter = ',';
   private width = 0;
   private signsColumn = -1;
   private vertexColumns: readonly number[] = [];
@@ -70,7 +63,7 @@ class ListReader {
   private readonly contradictions = new Map<number, readonly [number, number]>();
   private readonly texts = new Map<number, string>();
 
-  constructor(source: SourceText, arrangement: Arrangement) {
+  constructor(source: TableText, arrangement: Arrangement) {
     this.source = source;
     this.arrangement = arrangement;
     this.radicand = arrangement.generators.radicand;
@@ -92,56 +85,12 @@ class ListReader {
       started = true;
       this.takeRow(row);
     };
-    await this.eachRow(take);
+    await this.source.eachRow(take);
     if (!started)
-      throw this.fault(1, 0, 'no row follows the header', 'give a vertex or signs a line');
+      throw this.source.fault(1, 0, 'no row follows the header', 'give a vertex or signs a line');
     if (this.signsColumn >= 0) {
       const { table, lines, contradictions, texts } = this;
       this.signs = { table, lines, contradictions, texts };
-    }
-  }
-
-  /** Calls `take` for each row that is not blank or a comment. */
-  private async eachRow(take: (row: Row) => void): Promise<void> {
-    const { text } = this.source;
-    const first = /^\s*(?:#[^\r\n]*\s+)*([^\r\n]*)/.exec(text)![1];
-    // A quoted cell may hold line breaks: then the first line alone does not tell.
-    const seen = text.includes('"') ? text : first;
-    const found = [',', ';', '\t'].find((mark) => seen.includes(mark));
-    this.delimiter = found ?? ' ';
-    if (found === undefined && !text.includes('"')) {
-      let line = 0;
-      for (const match of text.matchAll(/([^\r\n]*)(?:\r\n|\r|\n|$)/g)) {
-        line++;
-        const content = match[1].replace(/#.*/, '').trim();
-        if (content !== '') take({ cells: content.split(/\s+/), line });
-      }
-      return;
-    }
-    const { parse, CsvError } = await import('csv-parse/sync');
-    try {
-      parse(text, {
-        delimiter: this.delimiter,
-        comment: '#',
-        comment_no_infix: true,
-        relax_column_count: true,
-        skip_empty_lines: true,
-        trim: true,
-        record_delimiter: ['\r\n', '\n', '\r'],
-        on_record: (cells: string[], { lines }: { lines: number }) => {
-          take({ cells, line: lines });
-          return null;
-        },
-      });
-    } catch (error) {
-      if (!(error instanceof CsvError)) throw error;
-      const line = Number((error as { lines?: number }).lines ?? 1);
-      throw this.fault(
-        line,
-        0,
-        'a quote is not closed, or text stands beside a cell in quotes',
-        'put the whole cell in quotes, or none of it',
-      );
     }
   }
 
@@ -151,7 +100,7 @@ class ListReader {
     const names = header?.cells ?? null;
     this.width = first.cells.length;
     if (header !== null && header.cells.length !== this.width)
-      throw this.raggedFault(first, header.cells.length);
+      throw this.source.raggedFault(first, header.cells.length);
     this.signsColumn = names?.indexOf('signs') ?? first.cells.findIndex((cell) => isSigns(cell));
     if (this.signsColumn < 0) this.signsColumn = first.cells.findIndex((cell) => isSigns(cell));
     const where = (test: (name: string, column: number) => boolean): number[] =>
@@ -168,7 +117,7 @@ class ListReader {
     else if (this.signsColumn < 0 || numeric.length === dimension) this.vertexColumns = numeric;
     const columns = this.vertexColumns.length;
     if (columns !== dimension && (columns > 0 || this.signsColumn < 0)) {
-      throw this.fault(
+      throw this.source.fault(
         first.line,
         0,
         `${columns} numbers a row, the arrangement has ${dimension} coordinates`,
@@ -179,7 +128,7 @@ class ListReader {
   }
 
   private takeRow(row: Row): void {
-    if (row.cells.length !== this.width) throw this.raggedFault(row, this.width);
+    if (row.cells.length !== this.width) throw this.source.raggedFault(row, this.width);
     if (this.signsColumn >= 0) this.takeSigns(row);
     if (this.vertices === null) return;
     const point = this.vertexColumns.map((column) => this.numberIn(row, column));
@@ -187,17 +136,9 @@ class ListReader {
   }
 
   private numberIn(row: Row, column: number): ExactNumber {
-    try {
-      const { value, radicand, rootOffset } = parseNumber(row.cells[column]);
-      if (radicand !== null && radicand !== this.radicand) {
-        if (this.radicand !== null) throw differentRoots(radicand, this.radicand, '', rootOffset);
-        this.radicand = radicand;
-      }
-      return value;
-    } catch (fault) {
-      if (!(fault instanceof NumberFault)) throw fault;
-      throw this.fault(row.line, column, fault.what, fault.remedy);
-    }
+    const { value, radicand } = this.source.numberIn(row, column, this.radicand);
+    this.radicand = radicand;
+    return value;
   }
 
   private takeSigns(row: Row): void {
@@ -207,12 +148,17 @@ class ListReader {
     const wrong = /[^+\-\u2212]/u.exec(text)?.[0];
     if (wrong !== undefined) {
       const what = `${quoted(wrong)} in the signs ${quoted(text)}`;
-      throw this.fault(row.line, this.signsColumn, what, 'a region has + or - for every normal');
+      throw this.source.fault(
+        row.line,
+        this.signsColumn,
+        what,
+        'a region has + or - for every normal',
+      );
     }
     if (text.length !== n) {
       const what = `${text.length} signs, the arrangement has ${n} normals`;
       const remedy = 'give a sign for every normal in the order of its file, parallel ones too';
-      throw this.fault(row.line, this.signsColumn, what, remedy);
+      throw this.source.fault(row.line, this.signsColumn, what, remedy);
     }
     const { table } = this;
     table.reserve(table.rows + 1);
@@ -229,24 +175,5 @@ class ListReader {
     }
     table.rows++;
     this.lines.push(row.line);
-  }
-
-  private raggedFault(row: Row, width: number): InputError {
-    const { length } = row.cells;
-    const what = `${length} ${length === 1 ? 'cell' : 'cells'}, the first row has ${width}`;
-    return this.fault(row.line, 0, what, 'give every row as many');
-  }
-
-  /** At a cell of a line; columns are found where no quotes are in the way. */
-  private fault(line: number, cell: number, what: string, remedy: string): InputError {
-    const content = this.source.text.split(/\r\n|\r|\n/, line)[line - 1] ?? '';
-    const { name: file } = this.source;
-    if (content.includes('"')) return new InputError(what, remedy, { file, line });
-    const pattern = this.delimiter === ' ' ? /\s*\S+/g : /[^,;\t]*[,;\t]?/g;
-    let column = 0;
-    for (let i = 0; i < cell; i++) column += pattern.exec(content)?.[0].length ?? 0;
-    column += /^\s*/.exec(content.slice(column))![0].length;
-    const position: Position = { file, line, column: column + 1 };
-    return new InputError(what, remedy, position);
   }
 }

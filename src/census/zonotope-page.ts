@@ -16,12 +16,12 @@ import {
 import type { AtLimit, MarginFacet, MarginReport } from './margin-report.js';
 import { plural, titleWords } from './wording.js';
 import type { EdgeClassReport, ZonotopeReport } from './zonotope-report.js';
-import { measureRows } from './zonotope-wording.js';
+import { measureRows, rootText } from './zonotope-wording.js';
 
 const termColumns = 16;
 /** Lines of edge classes; when there are more, those of one length and number share a line. */
 const classesShown = 20;
-const nameColumns = 30;
+const nameColumns = 44;
 
 /** The page, with a line feed at the end of each line; no line is longer than 80 columns. */
 export function formatZonotopePage(
@@ -212,7 +212,7 @@ function margins(report: MarginReport): string[] {
   };
   lines.push(...term('place', where[place]));
   if (nearest !== null && distance !== null) {
-    const exact = `${distance.decimal}, the square root of ${distance.square}`;
+    const exact = rootText(distance);
     const beyond = place === 'outside' ? 'beyond by' : 'largest ball';
     lines.push(...term(beyond, place === 'outside' ? `at least ${exact}` : `radius ${exact}`));
     const leaving = place === 'outside' ? 'beyond facet' : 'nearest facet';

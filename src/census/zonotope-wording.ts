@@ -1,6 +1,7 @@
 // The measure of the zonotope in words, for the page, the Markdown, the LaTeX table and the page of
 // the zonotope alone; from the record.
 import { formatPolynomial } from '../exact/polynomial.js';
+import { integerSquareRoot } from '../exact/quadratic.js';
 import { grouped } from './layout.js';
 import type { CensusRecord } from './record.js';
 
@@ -24,7 +25,7 @@ export function measureRows(zonotope: Fields, rank: number, dimension: number): 
     ]);
   }
   if (euclideanVolume !== null && rank < dimension) {
-    rows.push(['Euclidean', euclideanText(euclideanVolume)]);
+    rows.push(['Euclidean', rootText(euclideanVolume)]);
   }
   if (scaled)
     rows.push(['scaled by', `${grouped(scale)}, to make the generators integer, for what follows`]);
@@ -47,10 +48,17 @@ export function measureRows(zonotope: Fields, rank: number, dimension: number): 
   return rows;
 }
 
-function euclideanText({ square, decimal }: { square: string; decimal: string }): string {
-  return /^\d+$/.test(square) && BigInt(decimal.replace(/\D.*/, '')) ** 2n === BigInt(square)
-    ? grouped(decimal)
-    : `about ${decimal}, the square root of ${grouped(square)}`;
+/** A root through its exact square: itself where that is rational, else a decimal and the square. */
+export function rootText({ square, decimal }: { square: string; decimal: string }): string {
+  const [a, d] = square.split('/');
+  const roots = [a, d ?? '1'].map((text) => {
+    const root = /^\d+$/.test(text) ? integerSquareRoot(BigInt(text)) : -1n;
+    return root >= 0n && root * root === BigInt(text) ? root : null;
+  });
+  if (roots[0] !== null && roots[1] !== null) {
+    return grouped(roots[1] === 1n ? `${roots[0]}` : `${roots[0]}/${roots[1]}`);
+  }
+  return `about ${decimal}, the square root of ${grouped(square)}`;
 }
 
 /** The Ehrhart polynomial, or a row for each constituent. */
