@@ -19,6 +19,19 @@ const ROUNDED_FACTOR = 2 ** 49;
 const TIE_FREE_LIMIT = 2 ** 26;
 const RUN = 12;
 
+/** The line walked along: coordinate p is eliminated by class c, coordinate q runs along it. */
+interface Line {
+  readonly c: number;
+  readonly p: number;
+  readonly q: number;
+  /** 0 where products are exact as they are, else what divides them. */
+  readonly divisor: number;
+  /** |a_p|, and a_0 and a_q with the sign of a_p. */
+  readonly pivot: number;
+  readonly own0: number;
+  readonly ownq: number;
+}
+
 /** The crossings along one line; n classes at most, scratch reused between calls. */
 export class Crossings {
   readonly ring: Ring<unknown>;
@@ -35,8 +48,7 @@ export class Crossings {
    */
   readonly firstWaiting: Int32Array;
   readonly nextWaiting: Int32Array;
-  readonly #x: Float64Array;
-  readonly #y: Float64Array;
+  readonly #approximate: Float64Array;
   #spareOrder: Int32Array;
   #sparePosition: Float64Array;
 
@@ -47,8 +59,7 @@ export class Crossings {
     this.startsPositive = new Uint8Array(hyperplanes);
     this.firstWaiting = new Int32Array(hyperplanes);
     this.nextWaiting = new Int32Array(hyperplanes);
-    this.#x = new Float64Array(hyperplanes);
-    this.#y = new Float64Array(hyperplanes);
+    this.#approximate = new Float64Array(hyperplanes);
     this.#spareOrder = new Int32Array(hyperplanes);
     this.#sparePosition = new Float64Array(hyperplanes);
   }
@@ -57,9 +68,17 @@ export class Crossings {
   alongLine(level: FlatLevel, c: number, active: number): void {
     const B = level.largest;
     if (level.plain && (B <= DIRECT_LIMIT || B * B <= ROUNDED_FACTOR * level.pivot)) {
-      const direct = B <= DIRECT_LIMIT;
-      this.#takeLine(level, c, active, direct ? 0 : level.pivot);
-      if ((direct && 2 * B * B <= TIE_FREE_LIMIT) || this.#nothingHides()) return;
+      const { entries } = level;
+      const p = entries[3 * c + 2] === 0 ? 1 : 2;
+      const q = 3 - p;
+      const flip = entries[3 * c + p] < 0 ? -1 : 1;
+      const pivot = flip * entries[3 * c + p];
+      const own0 = flip * entries[3 * c];
+      const ownq = flip * entries[3 * c + q];
+      const divisor = B <= DIRECT_LIMIT ? 0 : level.pivot;
+      const line = { c, p, q, divisor, pivot, own0, ownq };
+      this.#take(level, active, line);
+      if ((divisor === 0 && 2 * B * B <= TIE_FREE_LIMIT) || this.#nothingHides(level, line)) return;
     }
     const { ring } = this;
     const rows = level.elementRows(ring);
@@ -81,14 +100,9 @@ export class Crossings {
   /** The points of a level 2, class 0 (at infinity) left out; classes 1 to active - 1 are active. */
   alongItself(level: FlatLevel, active: number): void {
     if (level.plain) {
-      const { entries, classes } = level;
-      this.count = 0;
-      for (let k = 1; k < classes; k++) {
-        if (k === active) this.#sort();
-        this.#take(k, entries[2 * k], entries[2 * k + 1], k < active);
-      }
-      if (active >= classes) this.#sort();
-      if (this.#nothingHides()) return;
+      const line = { c: 0, p: 0, q: 1, divisor: 0, pivot: 1, own0: 0, ownq: 0 };
+      this.#take(level, active, line);
+      if (this.#nothingHides(level, line)) return;
     }
     const rows = level.elementRows(this.ring);
     this.#overRing(
@@ -99,59 +113,71 @@ export class Crossings {
     );
   }
 
-  /** Class k has the value x + y s; the active come first, and are sorted when the others come. */
-  #take(k: number, x: number, y: number, isActive: boolean): void {
-    if (y === 0) {
-      this.startsPositive[k] = x > 0 ? 1 : 0;
-      return;
-    }
-    this.startsPositive[k] = y < 0 ? 1 : 0;
-    const here = -x / y;
-    if (isActive) {
-      this.#x[k] = x;
-      this.#y[k] = y;
-      this.position[this.count] = here;
-      this.order[this.count++] = k;
-      return;
-    }
-    const position = this.position;
-    let low = 0;
-    let high = this.count;
-    while (low < high) {
-      const middle = (low + high) >> 1;
-      if (position[middle] < here) low = middle + 1;
-      else high = middle;
-    }
-    if (low === this.count) return;
-    this.nextWaiting[k] = this.firstWaiting[low];
-    this.firstWaiting[low] = k;
-  }
-
-  /** `divisor` is 0 where products are exact as they are, else the pivot that divides them. */
-  #takeLine(level: FlatLevel, c: number, active: number, divisor: number): void {
-    const { entries, classes } = level;
-    const base = 3 * c;
-    const p = entries[base + 2] === 0 ? 1 : 2;
-    const q = 3 - p;
-    const flip = entries[base + p] < 0 ? -1 : 1;
-    const pivot = flip * entries[base + p];
-    const own0 = entries[base];
-    const ownq = entries[base + q];
-    this.count = 0;
-    for (let k = 1; k < classes; k++) {
-      if (k === active) this.#sort();
+  /**
+   * Values x + y s of all classes but 0 and c, coordinate p eliminated by class c (which changes
+   * nothing where c = 0), s being coordinate q. `divisor` is 0 where products are exact as they are,
+   * else the pivot that divides them.
+   */
+  #take(level: FlatLevel, active: number, line: Line): void {
+    const { entries, classes, dimension } = level;
+    const { c, p, q, divisor, pivot, own0, ownq } = line;
+    const { startsPositive, position, order } = this;
+    let count = 0;
+    for (let k = 1; k < active; k++) {
       if (k === c) continue;
-      const offset = 3 * k;
-      const factor = flip * entries[offset + p];
+      const offset = dimension * k;
+      const factor = entries[offset + p];
       let x = pivot * entries[offset] - factor * own0;
       let y = pivot * entries[offset + q] - factor * ownq;
       if (divisor !== 0) {
         x = Math.round(x / divisor);
         y = Math.round(y / divisor);
       }
-      this.#take(k, x, y, k < active);
+      if (y === 0) {
+        startsPositive[k] = x > 0 ? 1 : 0;
+        continue;
+      }
+      startsPositive[k] = y < 0 ? 1 : 0;
+      position[count] = -x / y;
+      order[count++] = k;
     }
-    if (active >= classes) this.#sort();
+    this.count = count;
+    this.#sort();
+    this.firstWaiting.fill(-1, 0, count);
+    if (active < classes) this.#wait(level, active, line);
+  }
+
+  /** The inactive classes: each waits for the first crossing not before its own. */
+  #wait(level: FlatLevel, active: number, line: Line): void {
+    const { entries, classes, dimension } = level;
+    const { p, q, divisor, pivot, own0, ownq } = line;
+    const { startsPositive, position, firstWaiting, nextWaiting, count } = this;
+    for (let k = active; k < classes; k++) {
+      const offset = dimension * k;
+      const factor = entries[offset + p];
+      let x = pivot * entries[offset] - factor * own0;
+      let y = pivot * entries[offset + q] - factor * ownq;
+      if (divisor !== 0) {
+        x = Math.round(x / divisor);
+        y = Math.round(y / divisor);
+      }
+      if (y === 0) {
+        startsPositive[k] = x > 0 ? 1 : 0;
+        continue;
+      }
+      startsPositive[k] = y < 0 ? 1 : 0;
+      const here = -x / y;
+      let low = 0;
+      let high = count;
+      while (low < high) {
+        const middle = (low + high) >> 1;
+        if (position[middle] < here) low = middle + 1;
+        else high = middle;
+      }
+      if (low === count) continue;
+      nextWaiting[k] = firstWaiting[low];
+      firstWaiting[low] = k;
+    }
   }
 
   /** Insertion sort in runs, then bottom-up merging: ascending by position. */
@@ -159,7 +185,6 @@ export class Crossings {
     const count = this.count;
     let position = this.position;
     let order = this.order;
-    this.firstWaiting.fill(-1, 0, count);
     const run = count <= 4 * RUN ? count : RUN;
     for (let start = 0; start < count; start += run) {
       const end = Math.min(start + run, count);
@@ -218,22 +243,28 @@ export class Crossings {
    * double may then lie just before or after, but still before the next crossing: either way its sign
    * is that of a point of the line there.
    */
-  #nothingHides(): boolean {
+  #nothingHides(level: FlatLevel, line: Line): boolean {
     const { position, order, count } = this;
-    const x = this.#x;
-    const y = this.#y;
+    const { entries, dimension } = level;
+    const { p, q, divisor, pivot, own0, ownq } = line;
+    const value = (k: number, j: number, own: number): number => {
+      const x = pivot * entries[dimension * k + j] - entries[dimension * k + p] * own;
+      return divisor === 0 ? x : Math.round(x / divisor);
+    };
     for (let i = 1; i < count; i++) {
       if (position[i] !== position[i - 1]) continue;
       const k = order[i];
       const l = order[i - 1];
-      if (!productsEqual(x[k], y[l], x[l], y[k])) return false;
+      const left = [value(k, 0, own0), value(l, q, ownq)];
+      const right = [value(l, 0, own0), value(k, q, ownq)];
+      if (!productsEqual(left[0], left[1], right[0], right[1])) return false;
     }
     return true;
   }
 
   #overRing(x: unknown[], y: unknown[], c: number, active: number): void {
     const { ring } = this;
-    const approximate = this.#x;
+    const approximate = this.#approximate;
     const crossing: number[] = [];
     for (let k = 1; k < x.length; k++) {
       if (k === c) continue;

@@ -113,6 +113,13 @@ export class Restriction {
       const kAgainst = straight ? against : along;
       let source = k * W;
       if (target >= 0) {
+        if (W === 2) {
+          outAlong[2 * target] |= kAlong[source];
+          outAlong[2 * target + 1] |= kAlong[source + 1];
+          outAgainst[2 * target] |= kAgainst[source];
+          outAgainst[2 * target + 1] |= kAgainst[source + 1];
+          continue;
+        }
         const end = (target + 1) * W;
         for (let w = target * W; w < end; w++, source++) {
           outAlong[w] |= kAlong[source];
@@ -127,6 +134,13 @@ export class Restriction {
       outLeast[target] = least[k];
       const start = target * f;
       for (let q = 0; q < f; q++) out[start + q] = straight ? row[q] : -row[q];
+      if (W === 2) {
+        outAlong[2 * target] = kAlong[source];
+        outAlong[2 * target + 1] = kAlong[source + 1];
+        outAgainst[2 * target] = kAgainst[source];
+        outAgainst[2 * target + 1] = kAgainst[source + 1];
+        continue;
+      }
       const end = (target + 1) * W;
       for (let w = target * W; w < end; w++, source++) {
         outAlong[w] = kAlong[source];

@@ -11,13 +11,14 @@ const STRIDE = 4;
 export class SplitTree {
   #nodes = new Int32Array(STRIDE * 256);
   #root = -1;
-  readonly #pathNode: Int32Array;
-  readonly #pathHyperplane: Int32Array;
+  /** Scratch: 2 v + side for the leaf on a side of split v. */
+  #leaves = new Int32Array(256);
+  /** Scratch: the walk's nodes and their hyperplanes in pairs. One array, to spare registers. */
+  readonly #path: Int32Array;
   readonly #wordsPerRow: number;
 
   constructor(hyperplanes: number, wordsPerRow: number) {
-    this.#pathNode = new Int32Array(hyperplanes + 1);
-    this.#pathHyperplane = new Int32Array(hyperplanes + 1);
+    this.#path = new Int32Array(2 * hyperplanes + 2);
     this.#wordsPerRow = wordsPerRow;
   }
 
@@ -35,8 +36,7 @@ export class SplitTree {
     const words = splits.words;
     if (to * STRIDE > this.#nodes.length) this.#grow(from, to);
     const nodes = this.#nodes;
-    const pathNode = this.#pathNode;
-    const pathHyperplane = this.#pathHyperplane;
+    const path = this.#path;
     let depth = 0;
     let v = from;
     if (this.#root < 0) {
@@ -56,18 +56,26 @@ export class SplitTree {
       let node = this.#root;
       if (depth > 0) {
         const first = W === 2 ? firstDifferenceOfTwo(words, row) : firstDifference(words, row, W);
-        while (depth > 1 && pathHyperplane[depth - 1] > first) depth--;
-        node = pathNode[--depth];
+        while (depth > 2 && path[depth - 1] > first) depth -= 2;
+        depth -= 2;
+        node = path[depth];
       }
-      let slot: number;
-      do {
-        const at = node * STRIDE;
-        const hyperplane = nodes[at + 2];
-        pathNode[depth] = node;
-        pathHyperplane[depth++] = hyperplane;
-        slot = at + ((words[row + (hyperplane >> 5)] >>> hyperplane) & 1);
-        node = nodes[slot];
-      } while (node >= 0);
+      // Hyperplanes ascend along the path, so the words of the row are used up one by one.
+      let slot = 0;
+      for (let w = 0; node >= 0; w++) {
+        const word = words[row + w];
+        const end = (w + 1) << 5;
+        do {
+          const at = node * STRIDE;
+          const hyperplane = nodes[at + 2];
+          if (hyperplane >= end) break;
+          path[depth] = node;
+          path[depth + 1] = hyperplane;
+          depth += 2;
+          slot = at + ((word >>> hyperplane) & 1);
+          node = nodes[slot];
+        } while (node >= 0);
+      }
       nodes[slot] = v;
     }
   }
@@ -86,18 +94,51 @@ export class SplitTree {
       this.#onlyLeaf(level, out);
       return;
     }
-    if (sorted) this.#sortedLeaves(splits, level, out);
-    else {
-      for (let v = 0; v < count; v++) {
-        if (this.#nodes[v * STRIDE] < 0) this.#appendLeaf(v, 0, splits, level, out);
-        if (this.#nodes[v * STRIDE + 1] < 0) this.#appendLeaf(v, 1, splits, level, out);
+    if (this.#leaves.length <= count) this.#leaves = new Int32Array(grownRows(count + 1));
+    if (sorted) this.#orderDepthFirst();
+    else this.#orderBySplits(count);
+    const leaves = this.#leaves;
+    const W = this.#wordsPerRow;
+    const nodes = this.#nodes;
+    const from = splits.words;
+    const into = out.words;
+    const { along, against } = level;
+    let at = out.rows * W;
+    for (let i = 0; i <= count; i++) {
+      const v = leaves[i] >> 1;
+      const side = leaves[i] & 1;
+      const h = nodes[v * STRIDE + 2];
+      const c = nodes[v * STRIDE + 3] * W;
+      // All ones where the side is that of the class's normal, a mask instead of a branch.
+      const straight = -(1 ^ side ^ ((along[c + (h >> 5)] >>> h) & 1));
+      const row = v * W;
+      if (W === 2) {
+        into[at] = from[row] | (along[c] & straight) | (against[c] & ~straight);
+        into[at + 1] = from[row + 1] | (along[c + 1] & straight) | (against[c + 1] & ~straight);
+        at += 2;
+      } else {
+        const mask = straight ? along : against;
+        for (let w = 0; w < W; w++) into[at++] = from[row + w] | mask[c + w];
       }
+    }
+    out.rows += count + 1;
+  }
+
+  #orderBySplits(count: number): void {
+    const nodes = this.#nodes;
+    const leaves = this.#leaves;
+    let at = 0;
+    for (let v = 0; v < count; v++) {
+      if (nodes[v * STRIDE] < 0) leaves[at++] = 2 * v;
+      if (nodes[v * STRIDE + 1] < 0) leaves[at++] = 2 * v + 1;
     }
   }
 
-  #sortedLeaves(splits: WordTable, level: FlatLevel, out: WordTable): void {
+  #orderDepthFirst(): void {
     const nodes = this.#nodes;
-    const stack = this.#pathNode;
+    const leaves = this.#leaves;
+    const stack = this.#path;
+    let at = 0;
     let depth = 0;
     let node = this.#root;
     for (;;) {
@@ -107,36 +148,16 @@ export class SplitTree {
         if (left < 0) break;
         node = left;
       }
-      this.#appendLeaf(node, 0, splits, level, out);
+      leaves[at++] = 2 * node;
       let right = -1;
       while (depth > 0 && right < 0) {
         node = stack[--depth];
         right = nodes[node * STRIDE + 1];
-        if (right < 0) this.#appendLeaf(node, 1, splits, level, out);
+        if (right < 0) leaves[at++] = 2 * node + 1;
       }
       if (right < 0) return;
       node = right;
     }
-  }
-
-  /** The region on the given side of split v: the split's word and the mask of its class on that side. */
-  #appendLeaf(v: number, side: number, splits: WordTable, level: FlatLevel, out: WordTable): void {
-    const W = this.#wordsPerRow;
-    const nodes = this.#nodes;
-    const { along, against } = level;
-    const from = splits.words;
-    const into = out.words;
-    const h = nodes[v * STRIDE + 2];
-    const c = nodes[v * STRIDE + 3] * W;
-    const mask = ((along[c + (h >> 5)] >>> h) & 1) === side ? along : against;
-    const row = v * W;
-    const at = out.rows++ * W;
-    if (W === 2) {
-      into[at] = from[row] | mask[c];
-      into[at + 1] = from[row + 1] | mask[c + 1];
-      return;
-    }
-    for (let w = 0; w < W; w++) into[at + w] = from[row + w] | mask[c + w];
   }
 
   /** No split: the positive side of class 0 is one region, and every class lies on one side of it. */

@@ -41,7 +41,7 @@ export class Sweep {
     let active = 1;
     while (active < classes && least[active] < bound) active++;
     const lines = active - 1;
-    out.reserve(out.rows + 1 + lines + (lines * (lines - 1)) / 2);
+    out.reserve(out.rows + 2 + lines + (lines * (lines - 1)) / 2);
     this.#orientLines(level);
     this.#lowestCell(level, out);
     if (this.#wordsPerRow === 2) {
@@ -128,10 +128,11 @@ export class Sweep {
     startsPositive[c] = above[c];
     let word0 = along[0];
     let word1 = along[1];
+    // Sides come in no order that a processor could foresee: masks and a late step instead of branches.
     for (let k = 1; k < classes; k++) {
-      const mask = startsPositive[k] === 1 ? along : against;
-      word0 |= mask[2 * k];
-      word1 |= mask[2 * k + 1];
+      const positive = -startsPositive[k];
+      word0 |= (along[2 * k] & positive) | (against[2 * k] & ~positive);
+      word1 |= (along[2 * k + 1] & positive) | (against[2 * k + 1] & ~positive);
     }
     const words = out.words;
     let at = 2 * out.rows;
@@ -139,7 +140,7 @@ export class Sweep {
     words[at++] = word1;
     for (let i = 0; i < count; ) {
       const here = position[i];
-      let opens = false;
+      let closed = 1;
       do {
         const k = order[i];
         word0 ^= along[2 * k] | against[2 * k];
@@ -149,13 +150,12 @@ export class Sweep {
           word1 ^= along[2 * l + 1] | against[2 * l + 1];
         }
         // The line starts above k exactly where k has the greater slope.
-        if (startsPositive[k] === above[k]) opens = true;
+        closed &= startsPositive[k] ^ above[k];
         i++;
       } while (i < count && position[i] === here);
-      if (opens) {
-        words[at++] = word0;
-        words[at++] = word1;
-      }
+      words[at] = word0;
+      words[at + 1] = word1;
+      at += 2 - 2 * closed;
     }
     out.rows = at >> 1;
   }
