@@ -133,7 +133,7 @@ function chosenList({
 
 async function readPoint(text: string, { generators }: Arrangement): Promise<ExactNumber[]> {
   const { NumberFault, parseNumber } = await import('../input/number-text.js');
-  const cells = text.replace(/^\(|\)$/g, '').split(text.includes(',') ? ',' : /\s+/);
+  const cells = text.trim().split(text.includes(',') ? ',' : /\s+/);
   const dimension = generators.normals[0].length;
   if (cells.length !== dimension) {
     throw new InputError(
