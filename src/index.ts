@@ -6,10 +6,14 @@ export { SignText } from './bits/sign-text.js';
 export { WordTable, wordsFor } from './bits/signs.js';
 export type { CensusOptions } from './census/census.js';
 export { describeDisagreement, disagreements, takeCensus } from './census/census.js';
+export { crosscheckFaces, crosscheckFacetList } from './census/crosscheck.js';
+export { readTheirFacets } from './census/crosscheck-facets.js';
 export { buildPosetWithin, faceRows } from './census/face-listing.js';
 export type { FaceRow } from './census/face-rows.js';
+export type { FacetRow, FacetVertexRow } from './census/facet-rows.js';
 export { formatLatex } from './census/latex.js';
 export { listChecked } from './census/listing.js';
+export type { MarginReport } from './census/margin-report.js';
 export { formatMarkdown } from './census/markdown.js';
 export { formatPage } from './census/page.js';
 export type { CensusListener, PolynomialFound, PolynomialRoute } from './census/polynomial.js';
@@ -19,11 +23,17 @@ export { recordJsonSchema, recordSchema } from './census/record.js';
 export type { RegionRow } from './census/region-rows.js';
 export { regionRows } from './census/region-rows.js';
 export { version } from './census/version.js';
+export { listEdges, listFacets, listTiles, listVertices } from './census/zonotope-lists.js';
+export { formatZonotopePage } from './census/zonotope-page.js';
+export type { ZonotopeOptions, ZonotopeReport } from './census/zonotope-report.js';
+export { reportZonotope } from './census/zonotope-report.js';
 export type { Position } from './errors.js';
 export { Disagreement, InputError, LimitError } from './errors.js';
 export type { ExactNumber } from './exact/number.js';
 export { exactNumber, formatNumber } from './exact/number.js';
 export { formatPolynomial, integerRoots } from './exact/polynomial.js';
+export type { SmithForm } from './exact/smith.js';
+export { elementaryDivisors, smithForm } from './exact/smith.js';
 export { writeFaces } from './export/faces.js';
 export { writeFlats } from './export/flats.js';
 export { writeGexf } from './export/gexf.js';
@@ -31,6 +41,7 @@ export { faceGraph, flatGraph } from './export/graph.js';
 export { writeGraphJson, writeGraphml, writeGraphTables } from './export/graph-text.js';
 export type { ListFormat } from './export/regions.js';
 export { writeRegions } from './export/regions.js';
+export { writeEdges, writeFacets, writeTiles, writeVertices } from './export/zonotope-lists.js';
 export type { FlatFaces } from './face/faces.js';
 export { countFaces, facesByFlat, streamFaces } from './face/faces.js';
 export type { FacePoset } from './face/poset.js';
@@ -58,5 +69,27 @@ export { InteriorPoints } from './region/interior.js';
 export type { RegionTable } from './region/regions.js';
 export { listRegions, regionCount } from './region/regions.js';
 export { WallFinder } from './region/walls.js';
+export { ehrhartByContraction } from './zonotope/ehrhart-by-contraction.js';
+export { ehrhartByFlats } from './zonotope/ehrhart-by-flats.js';
+export { ehrhartBySubsets } from './zonotope/ehrhart-by-subsets.js';
+export type { Constituent, EhrhartTerms } from './zonotope/ehrhart-terms.js';
+export {
+  boundaryPointsIn,
+  coefficientsAt,
+  ehrhartConstituents,
+  interiorPointsIn,
+  latticePointsIn,
+} from './zonotope/ehrhart-terms.js';
 export { findRival } from './zonotope/extremes.js';
+export type { Facet } from './zonotope/facets.js';
+export { facetsOf } from './zonotope/facets.js';
+export type { LatticeGenerators } from './zonotope/lattice-generators.js';
+export { centredGenerators, latticeGenerators } from './zonotope/lattice-generators.js';
+export type { Margin } from './zonotope/margins.js';
+export { marginAt } from './zonotope/margins.js';
+export { DirectPoints } from './zonotope/points-direct.js';
+export { centreOf, movedToOrigin } from './zonotope/shape.js';
+export type { Tile } from './zonotope/tiling.js';
+export { TileSearch, tilesOf } from './zonotope/tiling.js';
 export { ZonotopeVertices } from './zonotope/vertices.js';
+export { euclideanVolume, volumeByAngles, volumeBySubsets } from './zonotope/volume.js';
