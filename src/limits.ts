@@ -72,3 +72,6 @@ export const drawnFaces = 10_000;
 
 /** Seconds the cheapest route to volume and Ehrhart polynomial may take where these are asked for. */
 export const measurePatienceSeconds = 900;
+
+/** Blocks of a tiling in space that a picture holds: each is compared with each for the order of depth. */
+export const drawnBlocks = 500;

@@ -2,6 +2,7 @@
 import type { Command } from 'commander';
 import { InputError } from '../errors.js';
 import type { HassePart } from '../picture/selection.js';
+import { addDrawZonotope } from './draw-zonotope.js';
 import { loadArrangement } from './load.js';
 import { addCommonOptions, type CommonOptions, chooseFormat, memoryOf } from './options.js';
 import { writeTo } from './output.js';
@@ -20,11 +21,14 @@ interface HasseFlags extends CommonOptions {
 
 const afterDraw = `
 Pictures:
-  hasse ARRANGEMENT    the face poset by dimension, lower faces below
+  hasse ARRANGEMENT     the face poset by dimension, lower faces below
+  zonotope ARRANGEMENT  the zonotope, a polygon or a solid, edges by normal
+  tiling ARRANGEMENT    its half-open tiling, blocks moved apart in space
 
-Example:
+Examples:
   signwright draw hasse normals.txt -o faces.svg
-  signwright draw hasse --help`;
+  signwright draw zonotope normals.txt -o solid.svg
+  signwright draw tiling --help`;
 
 const afterHasse = `
 Signs begin with a sign, so they are given with =, as --above=+0-. Past what can
@@ -38,7 +42,7 @@ Examples:
 export function addDraw(program: Command): void {
   const draw = program
     .command('draw')
-    .summary('a picture as SVG: hasse')
+    .summary('a picture as SVG: hasse, zonotope, tiling')
     .description('Draw a picture as SVG.')
     .usage('PICTURE ARRANGEMENT [options]')
     .helpCommand(false)
@@ -56,6 +60,7 @@ export function addDraw(program: Command): void {
     .option('--title <text>', 'title of the picture (default: that of the file)')
     .addHelpText('after', afterHasse)
     .action(run);
+  addDrawZonotope(draw);
 }
 
 function partOf(options: HasseFlags): HassePart {

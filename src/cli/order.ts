@@ -4,7 +4,7 @@ import { either } from './options.js';
 
 /** Commands that take a word before what they work on, with what it is and the words they take. */
 const wordFirst: Record<string, { readonly noun: string; readonly words: readonly string[] }> = {
-  draw: { noun: 'picture', words: ['hasse'] },
+  draw: { noun: 'picture', words: ['hasse', 'zonotope', 'tiling'] },
   make: {
     noun: 'family',
     words: [
@@ -35,7 +35,7 @@ const later = [
 ];
 
 /** Pictures that this version does not draw. */
-const laterPictures = ['sphere', 'lines', 'zonotope', 'tiling', 'region-graph'];
+const laterPictures = ['sphere', 'lines', 'region-graph'];
 
 /** Throws InputError with the command as it was meant, where that can be told. */
 export function checkOrder(args: readonly string[], commands: readonly string[]): void {

@@ -59,6 +59,32 @@ export function* boxesAround(
   }
 }
 
+/** A parallelogram: a corner and the two sides from it. */
+export interface Slab {
+  readonly corner: readonly [number, number];
+  readonly sides: readonly [readonly [number, number], readonly [number, number]];
+}
+
+/** Whether a point lies inside a parallelogram, at least `margin` of it from each side. */
+export function insideSlab(
+  { corner, sides: [u, v] }: Slab,
+  x: number,
+  y: number,
+  margin = 0,
+): boolean {
+  const area = u[0] * v[1] - u[1] * v[0];
+  const [dx, dy] = [x - corner[0], y - corner[1]];
+  const [a, b] = [(dx * v[1] - dy * v[0]) / area, (u[0] * dy - u[1] * dx) / area];
+  return a > margin && a < 1 - margin && b > margin && b < 1 - margin;
+}
+
+/** Points that stand for a box: where none of them is covered, the box is taken to be free. */
+export function* pointsOf({ left, top, width, height }: Box): Generator<[number, number]> {
+  for (const a of [0, 0.25, 0.5, 0.75, 1]) {
+    for (const b of [0, 0.5, 1]) yield [left + a * width, top + b * height];
+  }
+}
+
 function inside(box: Box, area: Box): boolean {
   return (
     box.left >= area.left &&

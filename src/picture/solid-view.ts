@@ -99,13 +99,14 @@ export function chooseEye(
   points: readonly Spot[],
   faces: readonly (readonly number[])[],
   wanted: number | null,
+  usual: Spot = usualEye,
 ): Spot {
   const normals = faceNormals(points, faces);
   // Much is looked at only where it can be told apart.
   const detailed = points.length <= 200;
-  let best: Spot = usualEye;
+  let best = usual;
   let bestScore = -Infinity;
-  for (const eye of directions(wanted !== null)) {
+  for (const eye of directions(usual, wanted !== null)) {
     const camera = cameraFrom(eye);
     const slant = Math.min(...normals.map((n) => Math.abs(dot(n, camera.eye))));
     const front = faces.filter((_, f) => facesEye(normals[f], camera));
@@ -115,21 +116,22 @@ export function chooseEye(
     const score =
       Math.min(1, slant / 0.2) +
       Math.min(1, apart / 0.15) +
-      1.2 * dot(unit(usualEye), camera.eye) -
+      1.2 * dot(unit(usual), camera.eye) -
       hides;
     if (score > bestScore + 1e-9) [best, bestScore] = [eye, score];
   }
   return best;
 }
 
-function* directions(everywhere: boolean): Generator<Spot> {
-  yield usualEye;
-  const lowest = everywhere ? -60 : 10;
+function* directions(usual: Spot, everywhere: boolean): Generator<Spot> {
+  yield usual;
+  const about = (Math.atan2(usual[1], usual[0]) * 180) / Math.PI;
+  // Without a vertex to show, only the usual side is worth looking from.
+  const [lowest, widest] = everywhere ? [-60, 180] : [10, 50];
   for (let height = lowest; height <= 60; height += 5) {
-    for (let turn = 0; turn < 360; turn += 7) {
-      // Without a vertex to show, only the usual side is worth looking from.
-      if (!everywhere && (turn < 250 || turn > 350)) continue;
-      const [h, t] = [((height + 0.37) * Math.PI) / 180, ((turn + 0.41) * Math.PI) / 180];
+    for (let turn = -widest; turn < widest; turn += 7) {
+      const h = ((height + 0.37) * Math.PI) / 180;
+      const t = ((about + turn + 0.41) * Math.PI) / 180;
       yield [Math.cos(h) * Math.cos(t), Math.cos(h) * Math.sin(t), Math.sin(h)];
     }
   }

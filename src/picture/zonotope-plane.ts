@@ -2,7 +2,7 @@
 import type { Area } from './bands.js';
 import { softInk } from './palette.js';
 import type { Drawn } from './sheet.js';
-import { fitText, round } from './sheet.js';
+import { fitText, round, textWidth } from './sheet.js';
 
 /** Coordinates to points of the sheet. */
 export interface PlaneFit {
@@ -43,7 +43,13 @@ export function drawArrows(
   names: readonly string[],
   directions: readonly (readonly [number, number])[],
 ): void {
-  const left = Math.max(0, ...directions.map(([x]) => -x)) * arrowLength;
+  // Room for the arrows that point left, with their names.
+  const left = Math.max(
+    0,
+    ...directions.map(([x, y], i) =>
+      x / Math.hypot(x, y) < -0.3 ? -x * arrowLength + 7 * textWidth(fitText(names[i], 80, 7)) : 0,
+    ),
+  );
   const down = Math.max(0, ...directions.map(([, y]) => y)) * arrowLength;
   const [x0, y0] = [area.left + left + 14, area.top + area.height - down - 8];
   const group = svg

@@ -226,6 +226,37 @@ describe('draw', () => {
   });
 });
 
+describe('draw zonotope and draw tiling', () => {
+  it('draw the solid, marked or from elsewhere, and its tiles, the same each time', () => {
+    for (const picture of ['zonotope', 'tiling']) {
+      const svg = place.output(['draw', picture, file]);
+      expect(svg).toContain('<title');
+      expect(place.output(['draw', picture, file])).toBe(svg);
+      for (const flag of ['--view=-1,2,0.5', '--project=1,2', '--portrait', '--title=Ours']) {
+        expect(place.output(['draw', picture, file, flag]), flag).not.toBe(svg);
+      }
+    }
+    place.output(['draw', 'zonotope', file, '--region=++++', '-o', 'marked.svg']);
+    expect(place.read('marked.svg')).toContain('region ++++ is marked');
+  });
+
+  it('refuse what makes no sense', () => {
+    for (const [flags, says] of [
+      [['--view=1,2'], /view 1,2: not a direction/],
+      [['--view=1,a,2'], /--view 1,a,2: not three numbers/],
+      [['--view=0,0,0'], /not a direction/],
+      [['--region=++'], /not 4 signs/],
+      [['--region=---+'], /no region of the arrangement/],
+      [['--project=1,9'], /'9' is not one of 3 coordinates/],
+      [['--project=1,2', '--view=1,1,1'], /leave the view out/],
+    ] as [string[], RegExp][]) {
+      const { status, stderr, stdout } = place.run(['draw', 'zonotope', file, ...flags]);
+      expect([status, stdout]).toEqual([2, '']);
+      expect(stderr).toMatch(says);
+    }
+  });
+});
+
 describe('make', () => {
   const edges = place.write('edges.txt', 'a b\nb c\nc a\n');
   const offers = place.write('offers.csv', 'option,price,speed\nA,1,2\nB,2,1\nC,3,3\n');

@@ -9,7 +9,7 @@ afterAll(() => place.remove());
 const commands = [
   [],
   ...'census regions faces flats polynomial crosscheck draw make'.split(' ').map((name) => [name]),
-  ['draw', 'hasse'],
+  ...['hasse', 'zonotope', 'tiling'].map((name) => ['draw', name]),
   ...'reflection all-subsets threshold graph generic random polar-zonohedron comparisons'
     .split(' ')
     .map((name) => ['make', name]),
@@ -48,7 +48,7 @@ describe('help', () => {
     ]) {
       expect(help).toContain(word);
     }
-    for (const [, family] of commands.slice(10)) expect(help).toContain(family);
+    for (const [, family] of commands.slice(12)) expect(help).toContain(family);
   });
 });
 
