@@ -71,6 +71,10 @@ const zonotope = z.strictObject({
   latticePoints: natural.nullable(),
   interiorPoints: natural.nullable(),
   boundaryPoints: natural.nullable(),
+  unscaled: z
+    .strictObject({ latticePoints: natural, interiorPoints: natural })
+    .nullable()
+    .describe('of the zonotope itself, counted one by one, where scale is not 1 and it is small'),
   elementaryDivisors: z.array(natural).nullable().describe('of the matrix of generators'),
   sublatticeIndex: natural.nullable().describe('of the lattice that the generators span'),
 });

@@ -76,6 +76,8 @@ export interface Measure {
     readonly points: bigint;
     readonly interior: bigint;
   }[];
+  /** Points of Z itself where the scale is not 1, counted in the same way; null where not counted. */
+  readonly unscaled: { readonly points: bigint; readonly interior: bigint } | null;
   /** Routes that came upon a contradiction, with its words. */
   readonly faults: readonly { readonly route: string; readonly why: string }[];
   readonly notRun: readonly NotRun[];
@@ -122,7 +124,16 @@ export function measureZonotope(
   ];
   if (obstacle !== null) {
     const volumes = runAffordable('volume', volumeRoutes, options, notRun, faults);
-    return { obstacle, generators: null, ehrhart: [], volumes, counted: [], faults, notRun };
+    return {
+      obstacle,
+      generators: null,
+      ehrhart: [],
+      volumes,
+      counted: [],
+      unscaled: null,
+      faults,
+      notRun,
+    };
   }
   const generators = latticeGenerators(arrangement);
   const routes = ehrhartRoutes(arrangement, generators, lattice, stages);
@@ -142,11 +153,11 @@ export function measureZonotope(
   if (ehrhart.length > 0 && angles.seconds <= directCountSeconds) {
     volumes.push({ route: angles.name, value: angles.run(() => {}) });
   }
-  const counted =
+  const direct =
     ehrhart.length > 0 && lattice !== null
       ? countDirectly(arrangement, generators, lattice, options)
-      : [];
-  return { obstacle, generators, ehrhart, volumes, counted, faults, notRun };
+      : { counted: [], unscaled: null };
+  return { obstacle, generators, ehrhart, volumes, ...direct, faults, notRun };
 }
 
 function ehrhartRoutes(
@@ -223,22 +234,26 @@ function countDirectly(
   generators: LatticeGenerators,
   lattice: FlatLattice,
   { listener, stages }: MeasureOptions,
-): Measure['counted'] {
-  // Lines through the box of the first dilate times inequalities, before any facet is made.
+): Pick<Measure, 'counted' | 'unscaled'> {
+  // Lines through the box of Z times inequalities, before any facet is made.
+  const scale = Number(generators.scale);
   const sides = generators.corner.map((_, c) =>
-    generators.vectors.reduce((sum, v) => sum + Math.abs(Number(v[c])), 1),
+    generators.vectors.reduce((sum, v) => sum + Math.abs(Number(v[c])) / scale, 1),
   );
   const lines = sides.reduce((product, side) => product * side, 1) / Math.max(...sides);
   const facetCount = lattice.rankOffsets[lattice.rank] - lattice.rankOffsets[lattice.rank - 1];
-  if (lines * facetCount * 3e-9 > directCountSeconds) return [];
+  if (lines * facetCount * 3e-9 > directCountSeconds) {
+    return { counted: [], unscaled: null };
+  }
   listener.stage('lattice points one by one');
   const facets = [...stages.facetsOf(arrangement, lattice)] as Facet<bigint>[];
   const points = new DirectPoints(arrangement, facets);
   const counted: { dilate: number; points: bigint; interior: bigint }[] = [];
   for (const dilate of [1, 2, 3]) {
-    const whole = dilate * Number(generators.scale);
+    const whole = dilate * scale;
     if (!Number.isSafeInteger(whole) || points.estimateSeconds(whole) > directCountSeconds) break;
     counted.push({ dilate, ...points.count(whole) });
   }
-  return counted;
+  const affordable = scale !== 1 && points.estimateSeconds(1) <= directCountSeconds;
+  return { counted, unscaled: affordable ? points.count(1) : null };
 }

@@ -34,7 +34,7 @@ export function formatZonotopePage(
     faces(arrangement, report),
     edges(report),
     measure(arrangement, report),
-    report.margins === null ? [] : margins(report.margins),
+    report.margins === null ? [] : margins(arrangement, report.margins),
     checks(report),
     report.notRun.length === 0
       ? []
@@ -200,7 +200,7 @@ function measure({ rank, dimension }: Arrangement, report: ZonotopeReport): stri
   return lines.length > 1 ? lines : [];
 }
 
-function margins(report: MarginReport): string[] {
+function margins({ rank, dimension }: Arrangement, report: MarginReport): string[] {
   const { place, nearest, distance, box, forced } = report;
   const lines = ['Margins'];
   lines.push(...term('point', `(${report.point.join(', ')})`));
@@ -212,7 +212,7 @@ function margins(report: MarginReport): string[] {
   };
   lines.push(...term('place', where[place]));
   if (nearest !== null && distance !== null) {
-    const exact = rootText(distance);
+    const exact = `${rootText(distance)}${rank < dimension ? ', within the span' : ''}`;
     const beyond = place === 'outside' ? 'beyond by' : 'largest ball';
     lines.push(...term(beyond, place === 'outside' ? `at least ${exact}` : `radius ${exact}`));
     const leaving = place === 'outside' ? 'beyond facet' : 'nearest facet';
@@ -226,6 +226,9 @@ function margins(report: MarginReport): string[] {
       lines.push(...term('stopped by', facetText(box.facet)));
       lines.push(...term('at a limit', limitsText(box.facet.atLimit)));
     }
+  }
+  if (rank < dimension && (place === 'inside' || place === 'boundary')) {
+    lines.push(...term('largest box', 'none: the generators do not span the space'));
   }
   if (place === 'boundary') lines.push(...term('forced here', limitsText(forced)));
   return lines;

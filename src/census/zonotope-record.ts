@@ -54,6 +54,10 @@ export function measuresOf(
     latticePoints: count(latticePointsIn),
     interiorPoints: count(interiorPointsIn),
     boundaryPoints: count(boundaryPointsIn),
+    unscaled: measure.unscaled && {
+      latticePoints: String(measure.unscaled.points),
+      interiorPoints: String(measure.unscaled.interior),
+    },
     elementaryDivisors: divisors?.map(String) ?? null,
     sublatticeIndex: divisors && String(divisors.reduce((product, x) => product * x, 1n)),
   };

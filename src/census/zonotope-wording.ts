@@ -27,8 +27,17 @@ export function measureRows(zonotope: Fields, rank: number, dimension: number): 
   if (euclideanVolume !== null && rank < dimension) {
     rows.push(['Euclidean', rootText(euclideanVolume)]);
   }
-  if (scaled)
+  const { unscaled } = zonotope;
+  if (unscaled !== null) {
+    const { latticePoints: all, interiorPoints: inside } = unscaled;
+    rows.push([
+      'unscaled',
+      `${grouped(all)} lattice point${all === '1' ? '' : 's'}, ${grouped(inside)} of them inside`,
+    ]);
+  }
+  if (scaled) {
     rows.push(['scaled by', `${grouped(scale)}, to make the generators integer, for what follows`]);
+  }
   for (const [name, text] of ehrhartRows(zonotope)) rows.push([name, text]);
   if (latticePoints !== null && interiorPoints !== null && boundaryPoints !== null) {
     rows.push([

@@ -244,6 +244,46 @@ describe('the zonotope moved to the origin', () => {
   });
 });
 
+describe('ranges', () => {
+  const end = fc.integer({ min: -4, max: 4 });
+  const ends = fc
+    .tuple(end, end, fc.integer({ min: 1, max: 3 }))
+    .filter(([a, b]) => a !== b)
+    .map(([a, b, d]) => ({
+      low: exactNumber(BigInt(Math.min(a, b)), 0n, BigInt(d)),
+      high: exactNumber(BigInt(Math.max(a, b)), 0n, BigInt(d)),
+    }));
+
+  it('leave every check standing, and each volume times the lengths', () => {
+    fc.assert(
+      fc.property(
+        smallRows({ dimension: 2, maximum: 4, bound: 2 }).chain((rows) =>
+          fc.tuple(fc.constant(rows), fc.tuple(...rows.map(() => ends))),
+        ),
+        ([rows, ranges]) => {
+          const { checks, measures } = reportZonotope(arrangementOf(rows, { ranges }), ample);
+          expect(checks.filter(({ agrees }) => !agrees)).toEqual([]);
+          expect(checks.map(({ claim }) => claim).join()).toContain('lattice points');
+          if (measures.volume === null || arrangementOf(rows).rank < 2) return;
+          // The area of a zonotope is the sum over pairs (G. Shephard, 1974).
+          let area = 0;
+          rows.forEach(([a, b], i) => {
+            rows.slice(0, i).forEach(([c, d], j) => {
+              const length = [i, j].map((k) => {
+                const { low, high } = ranges[k];
+                return Number(high.a) / Number(high.d) - Number(low.a) / Number(low.d);
+              });
+              area += Math.abs(a * d - b * c) * length[0] * length[1];
+            });
+          });
+          expect(Number(measures.euclideanVolume!.decimal)).toBeCloseTo(area, 9);
+        },
+      ),
+      { numRuns: 40 },
+    );
+  });
+});
+
 describe('roots in words', () => {
   it.each([
     ['4', '2', '2'],

@@ -117,9 +117,14 @@ describe('the page', () => {
   it('says the scale of generators that are not integer, and the volume without it', () => {
     const { measures, notes } = report(['-'], '1/2 0\n0 1/3\n');
     expect(measures).toMatchObject({ volume: '1/6', scale: '6', ehrhart: ['1', '5', '6'] });
+    // [0, 5/2] x [0, 4/3] holds (0..2, 0..1), of which (1, 1) and (2, 1) are inside.
+    const { measures: larger } = report(['-'], '5/2 0\n0 4/3\n');
+    expect(larger.unscaled).toEqual({ latticePoints: '6', interiorPoints: '2' });
     expect(notes.join()).toContain('scaled by 6');
     const page = place.output(['zonotope', '-'], '1/2 0\n0 1/3\n');
-    expect(page).toMatch(/volume +1\/6, about 0\.166666666666666\n {2}scaled by +6/);
+    expect(page).toMatch(
+      /volume +1\/6, about 0\.166666666666666\n {2}unscaled +1 lattice point, 0 of them inside\n {2}scaled by +6/,
+    );
   });
 
   it('leaves out what the budget does not allow, and says so', () => {
