@@ -108,11 +108,13 @@ export function chooseEye(
   let bestScore = -Infinity;
   for (const eye of directions(usual, wanted !== null)) {
     const camera = cameraFrom(eye);
-    const slant = Math.min(...normals.map((n) => Math.abs(dot(n, camera.eye))));
-    const front = faces.filter((_, f) => facesEye(normals[f], camera));
-    const seen = [...new Set(front.flat())];
-    const hides = wanted !== null && !seen.includes(wanted) ? 10 : 0;
-    const apart = detailed ? nearest(points, seen, camera) : 0.1;
+    const slant = normals.reduce((least, n) => Math.min(least, Math.abs(dot(n, camera.eye))), 1);
+    const front = faces.filter(
+      (_, f) => (detailed || wanted !== null) && facesEye(normals[f], camera),
+    );
+    const seen = new Set(front.flat());
+    const hides = wanted !== null && !seen.has(wanted) ? 10 : 0;
+    const apart = detailed ? nearest(points, [...seen], camera) : 0.1;
     const score =
       Math.min(1, slant / 0.2) +
       Math.min(1, apart / 0.15) +

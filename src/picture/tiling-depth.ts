@@ -60,28 +60,30 @@ function compareDepth(a: Block, b: Block, camera: Camera): number {
     b.centre[1] - a.centre[1],
     b.centre[2] - a.centre[2],
   ];
+  const reach = (block: Block, axis: Spot): number =>
+    block.halves.reduce((sum, half) => sum + Math.abs(dot(half, axis)), 0);
+  const gap = (axis: Spot): number => Math.abs(dot(way, axis)) - reach(a, axis) - reach(b, axis);
+  // Images that lie apart: a line along a side of one of them runs between the two.
+  if ([...a.halves, ...b.halves].some((half) => gap(cross(half, camera.eye)) >= 0)) return 0;
   let widest = -Infinity;
   let side = 0;
-  const ownPairs = [
+  const pairs = [
     [0, 1],
     [0, 2],
     [1, 2],
   ];
   const axes = [
-    ...ownPairs.map(([i, j]) => cross(a.halves[i], a.halves[j])),
-    ...ownPairs.map(([i, j]) => cross(b.halves[i], b.halves[j])),
+    ...pairs.map(([i, j]) => cross(a.halves[i], a.halves[j])),
+    ...pairs.map(([i, j]) => cross(b.halves[i], b.halves[j])),
     ...a.halves.flatMap((p) => b.halves.map((q) => cross(p, q))),
   ];
   for (const axis of axes) {
     const length = Math.hypot(...axis);
     if (length < 1e-12) continue;
-    const reach = (block: Block): number =>
-      block.halves.reduce((sum, half) => sum + Math.abs(dot(half, axis)), 0);
-    const gap = (Math.abs(dot(way, axis)) - reach(a) - reach(b)) / length;
-    if (gap <= widest) continue;
-    widest = gap;
-    const sight = dot(axis, camera.eye) / length;
-    side = Math.abs(sight) < 1e-9 ? 0 : Math.sign(dot(way, axis)) * Math.sign(sight);
+    const width = gap(axis) / length;
+    if (width <= widest) continue;
+    widest = width;
+    side = Math.sign(dot(way, axis) * dot(axis, camera.eye));
   }
   return side;
 }

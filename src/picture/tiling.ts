@@ -17,7 +17,7 @@ import { drawBlocks } from './tiling-blocks.js';
 import { drawPlaneTiling } from './tiling-plane.js';
 
 /** How to draw. */
-export interface TilingOptions {
+export interface TilingPictureOptions {
   /** Which coordinates; default: the zonotope's own span, of rank 2 or 3. */
   readonly projection?: ProjectionChoice;
   /** Of blocks: the direction to look from; default: chosen. */
@@ -44,7 +44,7 @@ export interface TilingFigure {
  * The picture as SVG text, the same for the same input. InputError for a rank that cannot be drawn;
  * LimitError past the bound on tiles.
  */
-export function drawTiling(arrangement: Arrangement, options: TilingOptions = {}): string {
+export function drawTiling(arrangement: Arrangement, options: TilingPictureOptions = {}): string {
   const projection = projectArrangement(arrangement, options.projection ?? { kind: 'own' });
   const { rank } = projection.arrangement;
   const bound = rank === 2 ? drawnFaces : drawnBlocks;

@@ -14,7 +14,7 @@ import { drawPolygon } from './zonotope-polygon.js';
 import { drawSolid } from './zonotope-solid.js';
 
 /** How to draw. */
-export interface ZonotopeOptions {
+export interface ZonotopePictureOptions {
   /** Which coordinates; default: the zonotope's own span, of rank 2 or 3. */
   readonly projection?: ProjectionChoice;
   /** Of a solid: the direction to look from, three numbers not all 0; default: chosen. */
@@ -45,7 +45,10 @@ export interface ZonotopeFigure {
  * The picture as SVG text, the same for the same input. InputError for a rank that cannot be drawn, a
  * view without direction and signs of no region; LimitError past the bound on faces.
  */
-export function drawZonotope(arrangement: Arrangement, options: ZonotopeOptions = {}): string {
+export function drawZonotope(
+  arrangement: Arrangement,
+  options: ZonotopePictureOptions = {},
+): string {
   const choice = options.projection ?? { kind: 'own' };
   const view = options.view === undefined ? null : readView(options.view);
   const flat =
@@ -72,23 +75,20 @@ export function drawZonotope(arrangement: Arrangement, options: ZonotopeOptions 
     if (view !== null) {
       throw new InputError('a polygon lies flat on the sheet', 'leave the view out');
     }
-    refuseMany(2 * arrangement.hyperplanes.length, 'sides');
+    const sides = 2 * arrangement.hyperplanes.length;
+    if (sides > drawnFaces) {
+      throw new LimitError(
+        'a picture of the zonotope',
+        `${sides} sides`,
+        `${drawnFaces} sides`,
+        'leave generators out, or list its vertices instead',
+      );
+    }
     const polygon = buildPolygon(arrangement, choice);
     return drawPolygon(polygon, figure(polygon.projection, polygon.words));
   }
-  const solid = buildSolid(arrangement, choice);
-  refuseMany(solid.faces.length, 'faces');
+  const solid = buildSolid(arrangement, choice, drawnFaces);
   return drawSolid(solid, figure(solid.projection, wordsOf(solid.regions)));
-}
-
-function refuseMany(count: number, what: string): void {
-  if (count <= drawnFaces) return;
-  throw new LimitError(
-    'a picture of the zonotope',
-    `${count} ${what}`,
-    `${drawnFaces} ${what}`,
-    'write a mesh and look at it in a viewer, or leave generators out',
-  );
 }
 
 function findVertex(

@@ -53,9 +53,13 @@ export interface Solid {
 
 /**
  * The surface of the zonotope's image in three coordinates. InputError where the image is not solid;
- * LimitError past the bound on faces.
+ * LimitError where it has more faces than `most`.
  */
-export function buildSolid(arrangement: Arrangement, choice: ProjectionChoice): Solid {
+export function buildSolid(
+  arrangement: Arrangement,
+  choice: ProjectionChoice,
+  most = surfaceFaces,
+): Solid {
   const projection = projectArrangement(arrangement, choice);
   const image = projection.arrangement;
   if (image.rank !== 3) {
@@ -65,10 +69,10 @@ export function buildSolid(arrangement: Arrangement, choice: ProjectionChoice): 
     );
   }
   const m = image.hyperplanes.length;
-  if (m * (m - 1) > 4 * surfaceFaces) throw tooMany(`up to ${m * (m - 1)} faces`);
+  if (m * (m - 1) > 4 * most) throw tooMany(`up to ${m * (m - 1)} faces`, most);
   const lattice = listFlats(image);
   const faceCount = 2 * (lattice.rankOffsets[3] - lattice.rankOffsets[2]);
-  if (faceCount > surfaceFaces) throw tooMany(`${faceCount} faces`);
+  if (faceCount > most) throw tooMany(`${faceCount} faces`, most);
   const regions = listRegions(image);
   const place = new ZonotopeVertices(image);
   const words = wordsOf(regions);
@@ -81,11 +85,11 @@ export function buildSolid(arrangement: Arrangement, choice: ProjectionChoice): 
   return { projection, regions, vertices, faces, edges: edgesOf(faces, vertices.length) };
 }
 
-function tooMany(estimate: string): LimitError {
+function tooMany(estimate: string, most: number): LimitError {
   return new LimitError(
     'the surface of the zonotope',
     estimate,
-    `${surfaceFaces} faces`,
+    `${most} faces`,
     'leave generators out, or list its facets instead',
   );
 }
