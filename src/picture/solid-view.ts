@@ -119,7 +119,8 @@ export function chooseEye(
       Math.min(1, slant / 0.2) +
       Math.min(1, apart / 0.15) +
       1.2 * dot(unit(usual), camera.eye) -
-      hides;
+      hides -
+      (slant > edgeOn ? 0 : 5);
     if (score > bestScore + 1e-9) [best, bestScore] = [eye, score];
   }
   return best;
