@@ -59,7 +59,7 @@ export function meshNotes(solid: Solid): string[] {
   const { projection, vertices, edges, faces } = solid;
   const { axes, from, kept } = projection;
   const projected = from.rank > 3 ? ' of the projected normals' : '';
-  const { radicand, normals } = from.generators;
+  const { radicand, normals, ranges } = from.generators;
   const names = axes.map(({ name, measure }) =>
     oneLine(measure === null ? name : `${name} ${measure}`),
   );
@@ -76,7 +76,9 @@ export function meshNotes(solid: Solid): string[] {
     'Geometry of the model given, not a rating',
     ...kept.map((of, j) => {
       const normal = normals[of].map((x) => formatNumber(x, radicand)).join(' ');
-      return `Normal ${generatorName(projection, j)}: ${normal}`;
+      const ends = ranges === null ? [] : [ranges[of].low, ranges[of].high];
+      const range = ends.map((x) => formatNumber(x, radicand)).join(' to ');
+      return `Normal ${generatorName(projection, j)}: ${normal}${range === '' ? '' : `, from ${range}`}`;
     }),
   ];
 }

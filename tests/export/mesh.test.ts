@@ -310,6 +310,8 @@ describe('words', () => {
     const notes = readPly(write('ply', solid)).comments.join('\n');
     expect(notes).toMatch(/Vertex order: that of the list of regions, a vertex a region/);
     expect(notes).toMatch(/rounded to the nearest double/);
+    const ranged = write('obj', buildSolid(figures[5][1], own));
+    expect(ranged).toContain('# Normal 2: -6 0 -2, from 0 to 3/2\n');
     const projected = buildSolid(arrangementOf(typeA(4)), { kind: 'principal' });
     expect(write('obj', projected)).toMatch(
       /# A projection of a zonotope of rank 4 in 5 coordinates/,
