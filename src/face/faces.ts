@@ -5,7 +5,7 @@
 // that contains X but not what is already cut out, and so on. Going down from a flat only through
 // classes above the last one taken follows these chains and no others: no table of flats is needed.
 import type { Arrangement } from '../arrangement/arrangement.js';
-import { wordsFor } from '../bits/signs.js';
+import { firstBit, fullMask, wordsFor } from '../bits/signs.js';
 import { chartOf, insideFirst, separateClasses } from '../region/chart.js';
 import { ALL, RegionEnumerator } from '../region/enumerator.js';
 
@@ -47,12 +47,41 @@ export function* facesByFlat(arrangement: Arrangement): Generator<FlatFaces> {
     const { words, rows } = table;
     yield { dimension: e, zero, words, rows, classes, along, against, mirrored: true };
     if (e === 1) return;
+    if (e === 2) {
+      yield* raysOf(zero, words, rows, last);
+      return;
+    }
     const below = zeros[e - 1];
     for (let c = 1; c < classes; c++) {
       if (least[c] < last) continue;
       for (let w = 0; w < W; w++) below[w] = zero[w] | along[c * W + w] | against[c * W + w];
       enumerator.restrict(e, c);
       yield* descend(e - 1, least[c]);
+    }
+  }
+  // The cells of a plane come in the order in which a walk meets them: two neighbours differ in the
+  // class between them, and the ray on it has the signs of either where they agree.
+  const all = fullMask(n);
+  const [ray, cut, positive, negative] = [0, 1, 2, 3].map(() => new Int32Array(W));
+  function* raysOf(zero: Int32Array, words: Int32Array, rows: number, last: number) {
+    for (let i = 1; i < rows; i++) {
+      for (let w = 0; w < W; w++) ray[w] = words[i * W + w] ^ words[(i - 1) * W + w];
+      if (firstBit(ray, 0, W) < last) continue;
+      for (let w = 0; w < W; w++) {
+        cut[w] = zero[w] | ray[w];
+        positive[w] = words[i * W + w] & ~ray[w];
+        negative[w] = all[w] & ~cut[w] & ~positive[w];
+      }
+      yield {
+        dimension: 1,
+        zero: cut,
+        words: positive,
+        rows: 1,
+        classes: 1,
+        along: positive,
+        against: negative,
+        mirrored: true,
+      };
     }
   }
   let classes = separateClasses(arrangement.hyperplanes.map((h) => h.essential));

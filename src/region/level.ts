@@ -4,7 +4,10 @@
 // positive. Entries are minors of the top matrix (fraction-free elimination).
 import type { Ring } from '../exact/ring.js';
 
-/** Largest entry that plain arithmetic carries from level to level; see restriction.ts for the proof. */
+/**
+ * Largest entry that plain arithmetic carries from level to level, down to dimension 3; see
+ * restriction.ts for the proof, and for dimension 2.
+ */
 export const PLAIN_ENTRY_LIMIT = 2 ** 40;
 
 /** n hyperplanes, W words a row; every array is allocated once, for n classes. */

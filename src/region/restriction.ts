@@ -6,7 +6,8 @@
 //   rounded: B^2 <= 2^49 pivot: the products err by at most 2^-53 B^2 each, their difference by
 //            2^-53 2 B^2 more, together 2^-51 B^2, which the division brings to at most 2^-2, and
 //            itself errs by 2^-53 times a quotient below 2^41: under 1/2 in all, so rounding to the
-//            nearest integer gives the true one. A result above 2^40 is refused, not used.
+//            nearest integer gives the true one. A result above 2^40 is refused, not used. In
+//            dimension 2 results up to 2^50 serve: the division errs by 2^-3, still under 1/2 in all.
 // Everything else goes through the ring.
 import type { Ring } from '../exact/ring.js';
 import { type FlatLevel, PLAIN_ENTRY_LIMIT } from './level.js';
@@ -14,6 +15,8 @@ import { mergeParallel } from './parallel.js';
 
 const DIRECT_LIMIT = 2 ** 26;
 const ROUNDED_FACTOR = 2 ** 49;
+/** In dimension 2 no further product is taken in doubles but to be compared. */
+const LAST_ENTRY_LIMIT = 2 ** 50;
 /** Multipliers below 2^9 times this stay below 2^53: the sums behind the hash are exact. */
 const HASH_SUM_LIMIT = 2 ** 44;
 
@@ -38,7 +41,7 @@ export class Restriction {
     this.#slotStamp = new Int32Array(slots);
   }
 
-  /** `c` is a class of `from` other than 0; `into` is one dimension lower and is overwritten. */
+  /** `c` is a class of `from` other than 0; `into` is one dimension lower, 2 or more, and is overwritten. */
   restrict(from: FlatLevel, c: number, into: FlatLevel): void {
     if (from.plain) {
       const B = from.largest;
@@ -49,6 +52,15 @@ export class Restriction {
       }
     }
     this.#restrictOverRing(from, c, into);
+  }
+
+  /** Stamps are kept in 32 bits: before they run out every slot is cleared. */
+  #nextStamp(): number {
+    if (this.#stamp === 0x7fffffff) {
+      this.#slotStamp.fill(0);
+      this.#stamp = 0;
+    }
+    return ++this.#stamp;
   }
 
   #restrictPlain(from: FlatLevel, c: number, into: FlatLevel, rounded: boolean): boolean {
@@ -65,7 +77,7 @@ export class Restriction {
     const slotHash = this.#slotHash;
     const slotStamp = this.#slotStamp;
     const slotMask = slotClass.length - 1;
-    const stamp = ++this.#stamp;
+    const stamp = this.#nextStamp();
     const previous = from.pivot;
     const base = c * e;
     let p = e - 1;
@@ -73,6 +85,9 @@ export class Restriction {
     const flip = entries[base + p] < 0 ? -1 : 1;
     const pivot = flip * entries[base + p];
     const count = from.classes;
+    // Two coordinates are a fraction as they stand; more are folded into one by two functionals.
+    const multipliersAbove = f === 2 ? FIRST : MULTIPLIERS_ABOVE;
+    const multipliersBelow = f === 2 ? SECOND : MULTIPLIERS_BELOW;
     let classes = 0;
     let largest = 0;
     for (let k = 0; k < count; k++) {
@@ -92,8 +107,8 @@ export class Restriction {
         if (rounded) x = Math.round(x);
         if (lead === 0) lead = x;
         row[at] = x;
-        above += x * MULTIPLIERS_ABOVE[at & 15];
-        below += x * MULTIPLIERS_BELOW[at & 15];
+        above += x * multipliersAbove[at & 15];
+        below += x * multipliersBelow[at & 15];
         at++;
         const size = x < 0 ? -x : x;
         if (size > largest) largest = size;
@@ -147,7 +162,8 @@ export class Restriction {
         outAgainst[w] = kAgainst[source];
       }
     }
-    if (largest > PLAIN_ENTRY_LIMIT || largest * f > HASH_SUM_LIMIT) return false;
+    if (f === 2 ? largest > LAST_ENTRY_LIMIT : largest > PLAIN_ENTRY_LIMIT) return false;
+    if (f !== 2 && largest * f > HASH_SUM_LIMIT) return false;
     into.classes = classes;
     into.plain = true;
     into.largest = largest;
@@ -216,6 +232,9 @@ export class Restriction {
     }
   }
 }
+
+const FIRST = Float64Array.of(1, 0);
+const SECOND = Float64Array.of(0, 1);
 
 // Any integers below 2^9 do.
 const MULTIPLIERS_ABOVE = Float64Array.of(
