@@ -65,10 +65,7 @@ export function addMake(program: Command): void {
       .command(usage, { hidden: true })
       .description(summary)
       .option('-o, --out <file>', 'write to a file; its ending picks the format')
-      .option(
-        '--format <name>',
-        `${either(formats)} (default: text, csv where coordinates have names)`,
-      )
+      .option('--format <name>', `${either(formats)} (default: text)`)
       .option('--json', 'the same as --format json')
       .addOption(acceptedOption('--threads <n>').argParser(readThreads))
       .addOption(acceptedOption('--memory <size>').argParser(readMemory))
@@ -178,10 +175,11 @@ async function makeRandom(flags: RandomFlags): Promise<void> {
 }
 
 async function write(list: GeneratorList, flags: MakeFlags): Promise<void> {
-  const preferred = list.coordinates === null ? formats : ['csv', 'text', 'json'];
-  const format = chooseFormat(flags, preferred);
-  const { formatCsv, formatJson, formatText } = await import('../input/format.js');
-  const written = { text: formatText, csv: formatCsv, json: formatJson };
+  const format = chooseFormat(flags, formats);
+  const { formatCsv, formatJson, formatPlain, formatText } = await import('../input/format.js');
+  // Without a word on the form, what is written can always be read on the other side of the pipe.
+  const unasked = flags.format === undefined && (flags.out === undefined || flags.out === '-');
+  const written = { text: unasked ? formatPlain : formatText, csv: formatCsv, json: formatJson };
   const text = written[format as keyof typeof written](list);
   await writeTo(flags.out ?? null, (result) => result.write(text));
 }

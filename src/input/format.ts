@@ -7,8 +7,8 @@ import { reservedColumns } from './read-csv.js';
 import { quoted } from './source.js';
 
 /**
- * The text form. The title becomes a comment and names of coordinates are not kept. Throws
- * InputError where the list has ranges, or a label that a comment sign would cut.
+ * The text form, title and names of coordinates in comments. Throws InputError where the list has
+ * ranges, a label that a comment sign would cut, or a coordinate that a comma would.
  */
 export function formatText(list: GeneratorList): string {
   if (list.ranges !== null) {
@@ -23,8 +23,24 @@ export function formatText(list: GeneratorList): string {
     const numbers = normal.map((x) => formatNumber(x, list.radicand)).join(' ');
     return label === null ? numbers : `${label}: ${numbers}`;
   });
-  const title = list.title === null ? [] : [`# ${list.title}`];
-  return `${[...title, ...lines].join('\n')}\n`;
+  const comma = list.coordinates?.find((name) => name.includes(','));
+  if (comma !== undefined) {
+    const what = `the text form cannot hold the coordinate ${quoted(comma)}`;
+    throw new InputError(what, 'write CSV or JSON: commas separate names');
+  }
+  const title = list.title === null ? [] : [`# title: ${list.title}`];
+  const names = list.coordinates ? [`# coordinates: ${list.coordinates.join(', ')}`] : [];
+  return `${[...title, ...names, ...lines].join('\n')}\n`;
+}
+
+/** The text form where it can hold the list, else the JSON form, which holds every list. */
+export function formatPlain(list: GeneratorList): string {
+  try {
+    return formatText(list);
+  } catch (error) {
+    if (error instanceof InputError) return formatJson(list);
+    throw error;
+  }
 }
 
 /**

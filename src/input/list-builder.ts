@@ -125,11 +125,18 @@ export class ListBuilder {
   }
 }
 
+// Control characters would reach terminals and files; a lone surrogate cannot be written as UTF-8.
+const unfitForNames = /[\p{Cc}\p{Cs}\u2028\u2029]/u;
+
+/** True where a trimmed text can be a label, a title or the name of a coordinate. */
+export function isName(text: string): boolean {
+  return text !== '' && !unfitForNames.test(text);
+}
+
 /** A label, title or name of a coordinate without outer blanks; null when nothing is left. */
 export function cleanName(text: string, place: Place): string | null {
   const name = text.trim();
-  // Control characters would reach terminals and files; a lone surrogate cannot be written as UTF-8.
-  if (/[\p{Cc}\p{Cs}\u2028\u2029]/u.test(name)) {
+  if (unfitForNames.test(name)) {
     const what = `the name ${quoted(name)} has a line break or control character in it`;
     throw new InputError(what, 'use letters, digits, blanks and signs', place());
   }

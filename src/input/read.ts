@@ -27,7 +27,7 @@ export async function readGenerators(
     });
   }
   const source = new SourceText(bytes, name);
-  const chosen = given ?? formatOfText(source.text);
+  const chosen = given ?? formatOfText(source.text, /\.txt$/i.test(name));
   if (chosen === 'json') return (await import('./read-json.js')).readJson(source);
   if (chosen === 'csv') return (await import('./read-csv.js')).readCsv(source);
   return readText(source);
@@ -35,15 +35,23 @@ export async function readGenerators(
 
 function formatOfName(name: string): InputFormat | null {
   const ending = /\.([a-z]+)$/i.exec(name)?.[1]?.toLowerCase();
-  if (ending === 'csv' || ending === 'json' || ending === 'npy') return ending;
-  return ending === 'txt' ? 'text' : null;
+  return ending === 'csv' || ending === 'json' || ending === 'npy' ? ending : null;
 }
 
-/** JSON begins with a bracket; CSV with a line in which nothing between commas or blanks is a number. */
-function formatOfText(text: string): InputFormat {
-  if (/^\s*[{[]/.test(text)) return 'json';
+/**
+ * By the first line: JSON begins with a bracket; text has nothing but numbers after its label, or a
+ * number somewhere; CSV has none between its commas. A file named as text is CSV only with a comma.
+ */
+function formatOfText(text: string, namedText: boolean): InputFormat {
   const first = /^\s*([^\r\n]*)/.exec(text)![1]!;
+  if (/^(\{\s*("|\}|$)|\[\s*[[{"\]])/.test(first)) return 'json';
   if (first.startsWith('#')) return 'text';
-  const parts = first.includes(',') ? first.split(',') : first.split(/[\s:]+/);
-  return parts.some(isNumber) ? 'text' : 'csv';
+  const words = first
+    .slice(first.lastIndexOf(':') + 1)
+    .split(/[\s,]+/)
+    .filter((word) => word !== '');
+  if (words.length > 0 && words.every(isNumber)) return 'text';
+  if (!namedText && /^[{[]/.test(first)) return 'json';
+  const parts = first.includes(',') ? first.split(',') : words;
+  return parts.some(isNumber) || (namedText && !first.includes(',')) ? 'text' : 'csv';
 }

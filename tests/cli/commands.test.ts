@@ -297,6 +297,26 @@ describe('make', () => {
     }
   });
 
+  it('writes by itself what the next command reads, from a pipe or from a file of any name', async () => {
+    for (const args of [
+      ['reflection', 'G2'],
+      ['graph', '--cycle', '4'],
+      ['comparisons', offers],
+    ]) {
+      const text = place.output(['make', ...args]);
+      const { title, coordinates, labels } = await read(place.output(['make', ...args, '--json']));
+      expect(await read(text)).toMatchObject({ title, coordinates, labels });
+      expect(place.output(['census', '-'], text).split('\n')[0]).toBe(title);
+      for (const name of ['made.txt', 'made.dat', 'made']) {
+        expect(place.output(['census', place.write(name, text)]).split('\n')[0]).toBe(title);
+      }
+    }
+    const hostile = place.write('hostile.csv', 'option,"a,b",c\n#1,1,2\n#2,2,1\n');
+    expect(
+      place.output(['regions', '-', '--count'], place.output(['make', 'comparisons', hostile])),
+    ).toBe('2\n');
+  });
+
   it('writes to a file by its ending, the same for the same seed', () => {
     const random = ['make', 'random', '--rank', '4', '--normals', '9', '--bound', '99'];
     place.output([...random, '--seed', '3', '-o', 'a.json']);

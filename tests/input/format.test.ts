@@ -3,7 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { InputError } from '../../src/errors.js';
 import { exactNumber, isZero } from '../../src/exact/number.js';
-import { formatCsv, formatJson, formatText } from '../../src/input/format.js';
+import { formatCsv, formatJson, formatPlain, formatText } from '../../src/input/format.js';
 import { type GeneratorList, type Range, unitRange } from '../../src/input/generators.js';
 import { listOf } from '../support/lists.js';
 import { readAs } from './reading.js';
@@ -81,29 +81,42 @@ describe('what is written', () => {
     );
   });
 
-  it('comes back from text as normals and labels', async () => {
+  it('comes back from text whole where it has no ranges', async () => {
     await fc.assert(
       fc.asyncProperty(anyList, async (list) => {
         const plain = {
           ...list,
           ranges: null,
           labels: list.labels?.map((label) => label?.replaceAll('#', '+') ?? null) ?? null,
+          coordinates: list.coordinates?.map((axis) => axis.replaceAll(',', ';')) ?? null,
         };
-        fc.pre(new Set(plain.labels ?? []).size === new Set(list.labels ?? []).size);
+        for (const key of ['labels', 'coordinates'] as const) {
+          fc.pre(new Set(plain[key] ?? []).size === new Set(list[key] ?? []).size);
+        }
         const back = await readAs('a.txt', formatText(plain));
-        expect(withoutSource(back)).toEqual({
-          ...withoutSource(plain),
-          title: null,
-          coordinates: null,
-        });
+        expect(withoutSource(back)).toEqual(withoutSource(plain));
       }),
     );
+  });
+
+  it('is text where nothing else is asked, or JSON where text cannot hold it', async () => {
+    const plain = listOf([[1, 2]]);
+    expect(formatPlain(plain)).toBe(formatText(plain));
+    for (const list of [
+      { ...plain, labels: ['a#b'] },
+      { ...plain, coordinates: ['x,y', 'z'] },
+    ]) {
+      expect(withoutSource(await readAs('-', formatPlain(list)))).toEqual(withoutSource(list));
+    }
   });
 
   it('refuses what a form cannot hold', () => {
     const list = listOf([[1, 2]]);
     expect(() => formatText({ ...list, ranges: [unitRange] })).toThrow(InputError);
     expect(() => formatText({ ...list, labels: ['a#b'] })).toThrow('the label "a#b"');
+    expect(() => formatText({ ...list, coordinates: ['x,y', 'z'] })).toThrow(
+      'the coordinate "x,y"',
+    );
     expect(() => formatCsv({ ...list, coordinates: ['x', 'low'] })).toThrow('a coordinate "low"');
     expect(() => formatCsv({ ...list, coordinates: ['1', '2'] })).toThrow('header of numbers');
   });

@@ -21,6 +21,29 @@ describe('text', () => {
     expect(list.radicand).toBeNull();
   });
 
+  it('reads a title and names of coordinates from comments above the first normal', async () => {
+    const list = await readAs(
+      'a.txt',
+      '# by hand\n#title:  Three winds \n# coordinates: east, up and north\n1 0 # title: no\n# title: late\n',
+    );
+    expect(list.title).toBe('Three winds');
+    expect(list.coordinates).toEqual(['east', 'up and north']);
+  });
+
+  it('takes no offence at a comment that only looks like one of these', async () => {
+    for (const comment of [
+      'title:',
+      'title: \u001b[31m',
+      'coordinates: metres',
+      'coordinates: x, x',
+      'coordinates: x,',
+      'titles: a',
+    ]) {
+      const list = await readAs('a.txt', `# ${comment}\n1 0\n`);
+      expect([list.title, list.coordinates], comment).toEqual([null, null]);
+    }
+  });
+
   it('takes any line ending and a byte-order mark', async () => {
     for (const end of ['\n', '\r', '\r\n']) {
       expect(shown(await readAs('a.txt', `\ufeff1 2${end}3 4${end}`))).toEqual([
@@ -104,9 +127,23 @@ describe('the form of a file without a telling name', () => {
     ['fore: 1, 2', null],
     ['fore: 1 2', null],
     ['# thrust 1, thrust 2\n1,2', null],
+    ['fore, port: 1 2', null],
+    ['{fore}: 1 2', null],
+    ['1 2,\n3 4', null],
+    ['time: s,x\n1,2', ['time: s', 'x']],
     ['(1+sqrt(5))/2,1', null],
     [' {"normals": [[1, 2]], "coordinates": ["p", "q"]}', ['p', 'q']],
   ])('%j', async (text, coordinates) => {
-    expect((await readAs('-', text)).coordinates).toEqual(coordinates);
+    const read = () => readAs('-', text);
+    if (text.startsWith('1 2,')) expect((await faultOf(read)).what).toMatch(/^a comma with no/);
+    else expect((await read()).coordinates).toEqual(coordinates);
+  });
+
+  it('is looked for in a file named .txt too, where it is plain', async () => {
+    expect((await readAs('a.txt', 'x,y\n1,2')).coordinates).toEqual(['x', 'y']);
+    expect((await readAs('a.TXT', '{"normals": [[1, 2]], "title": "t"}')).title).toBe('t');
+    expect((await readAs('a.txt', '[fore]: 1 2')).labels).toEqual(['[fore]']);
+    expect((await readAs('a.txt', 'fore, port: 1 2')).labels).toEqual(['fore, port']);
+    expect(await faultIn('a.txt', 'one two\n1 2')).toBe('1:1 cannot read "one" as a number');
   });
 });
