@@ -14,12 +14,15 @@ export function minorBounds<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): 
       const part = Number(b) * root * sign;
       return Math.abs(Number(a) + part) + 2 ** -48 * (Math.abs(Number(a)) + Math.abs(part));
     });
-    return Math.max(0, Math.log2(Math.hypot(...entries)) + 2 ** -20);
+    const length = Math.log2(Math.hypot(...entries));
+    // Parts past the range of doubles may cancel to NaN: no bound is known then.
+    return Number.isNaN(length) ? Number.POSITIVE_INFINITY : Math.max(0, length + 2 ** -20);
   };
   const logs = rows.map((row) =>
     ring.radicand === null ? logNorm(row, 1) : logNorm(row, 1) + logNorm(row, -1),
   );
-  logs.sort((a, b) => b - a);
+  // Not b - a, which is NaN for two infinities.
+  logs.sort((a, b) => (a < b ? 1 : a > b ? -1 : 0));
   const bounds = [0];
   for (let k = 0; k < rows[0].length && k < logs.length; k++) bounds.push(bounds[k] + logs[k]);
   return bounds;
