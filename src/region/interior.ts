@@ -18,6 +18,10 @@ const DOUBLE_LIMIT = 2 ** 44;
 /** Largest dimension in which every way of rounding a point is tried. */
 const SHRINK_DIMENSIONS = 6;
 
+/** Times a point is shrunk by one step before the step doubles, and rounds of shrinking in all. */
+const SHRINK_STREAK = 16;
+const SHRINK_ROUNDS = 512;
+
 /** Finds interior points of the regions of one arrangement. */
 export class InteriorPoints {
   private readonly arrangement: Arrangement;
@@ -132,7 +136,8 @@ export class InteriorPoints {
 
   /**
    * Shrinks `best` by an eighth, a sixteenth, ... and last by one unit, each as long as some rounding
-   * of the result, every coordinate up or down, is certified. Few dimensions only: there are 2^d.
+   * of the result, every coordinate up or down, is certified. Few dimensions only: there are 2^d. In a
+   * thin region a step may fail and billions of smaller ones succeed: hence the doubling and the end.
    */
   private shrink(words: Int32Array, offset: number, bounds: ArrayLike<number>): void {
     const { candidate, best } = this;
@@ -141,7 +146,8 @@ export class InteriorPoints {
     let largest = 0;
     for (let j = 0; j < d; j++) largest = Math.max(largest, Math.abs(best[j]));
     let step = Math.max(1, Math.floor(largest / 8));
-    while (step >= 1 && largest > step) {
+    let streak = 0;
+    for (let round = 0; round < SHRINK_ROUNDS && step >= 1 && largest > step; round++) {
       let smaller = false;
       for (let ups = 0; ups < 1 << d && !smaller; ups++) {
         for (let j = 0; j < d; j++) {
@@ -153,7 +159,10 @@ export class InteriorPoints {
       if (smaller) {
         best.set(candidate);
         largest -= step;
+        if (++streak < SHRINK_STREAK) continue;
+        step *= 2;
       } else step = Math.floor(step / 2);
+      streak = 0;
     }
   }
 
