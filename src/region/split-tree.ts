@@ -3,9 +3,12 @@
 // the class inserted; its sign word, read at the classes of the nodes, leads from the root to the
 // leaf it splits. Along any path the classes ascend.
 import { grownRows, type WordTable } from '../bits/signs.js';
+import { LimitError } from '../errors.js';
 import type { FlatLevel } from './level.js';
 
 const STRIDE = 4;
+/** Most splits: twice their number, which names the leaves, fits 32 bits. */
+const MOST_SPLITS = 2 ** 30;
 
 /** Node v is row v of the splits' word table; its two children, its hyperplane, its class. */
 export class SplitTree {
@@ -34,6 +37,14 @@ export class SplitTree {
   insert(splits: WordTable, from: number, to: number, c: number, h: number): void {
     const W = this.#wordsPerRow;
     const words = splits.words;
+    if (to > MOST_SPLITS) {
+      throw new LimitError(
+        'the list of regions',
+        `more than ${2 * MOST_SPLITS} regions`,
+        `${2 * MOST_SPLITS} regions`,
+        'take their number from the characteristic polynomial, which lists no regions',
+      );
+    }
     if (to * STRIDE > this.#nodes.length) this.#grow(from, to);
     const nodes = this.#nodes;
     const path = this.#path;

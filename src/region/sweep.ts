@@ -157,7 +157,8 @@ export class Sweep {
       words[at + 1] = word1;
       at += 2 - 2 * closed;
     }
-    out.rows = at >> 1;
+    // Not a shift: past 2^30 rows that would wrap.
+    out.rows = at / 2;
   }
 
   #walk(level: FlatLevel, c: number, active: number, out: WordTable): void {
