@@ -42,7 +42,7 @@ function usage(message: string, command: string): string {
     .replace(/\s*\n\s*/g, ' ')
     .replace(/\.?\s*\(Did you mean (.*)\?\)$/, '; did you mean $1?')
     .replace(/\.$/, '');
-  return `${line}; see: signwright ${command === '' ? '' : `${command} `}--help`;
+  return `${line}${line.endsWith('?') ? ' See' : '; see'}: signwright ${command === '' ? '' : `${command} `}--help`;
 }
 
 function outOfMemory(error: Error): boolean {

@@ -105,7 +105,12 @@ export function readWhole(name: string, least: number): (text: string) => number
   return (text) => {
     const value = Number(text);
     if (/^[+]?\d+$/.test(text) && Number.isSafeInteger(value) && value >= least) return value;
-    throw new InputError(`${name} ${text}: not a whole number`, `give ${least} or more`);
+    const whole = /^[+]?\d+$/.test(text);
+    if (whole && value >= least) {
+      throw new InputError(`${name} ${text}: too large`, 'give a smaller number');
+    }
+    const fault = whole ? 'too small' : 'not a whole number';
+    throw new InputError(`${name} ${text}: ${fault}`, `give ${least} or more`);
   };
 }
 

@@ -47,10 +47,9 @@ export function checkOrder(args: readonly string[], commands: readonly string[])
   if (!known(first)) {
     const command = words.find(known);
     if (command !== undefined) {
-      const rest = words.filter((word) => word !== command);
       throw new InputError(
-        `the command comes first, before ${first}`,
-        `write: signwright ${inOrder(command, rest).join(' ')}`,
+        `the command comes first, before ${args[0]}`,
+        `write: signwright ${inOrder(command, args)}`,
       );
     }
     if (later.includes(first)) {
@@ -75,18 +74,22 @@ export function checkOrder(args: readonly string[], commands: readonly string[])
   }
   if (words.slice(2).some((word) => takes.words.includes(word))) {
     throw new InputError(
-      `${first}: the ${takes.noun} comes first, before ${second}`,
-      `write: signwright ${inOrder(first, words.slice(1)).join(' ')}`,
+      `${first}: the ${takes.noun} comes first, before ${args[args.indexOf(first) + 1]}`,
+      `write: signwright ${inOrder(first, args)}`,
     );
   }
   throw new InputError(`${first} ${second}: no such ${takes.noun}`, `give ${either(takes.words)}`);
 }
 
-function inOrder(command: string, rest: readonly string[]): string[] {
+/** All arguments, the command and the word it takes moved to the front. */
+function inOrder(command: string, args: readonly string[]): string {
+  const rest = args.toSpliced(args.indexOf(command), 1);
   const words = wordFirst[command]?.words ?? [];
-  return [
-    command,
-    ...rest.filter((word) => words.includes(word)),
-    ...rest.filter((word) => !words.includes(word)),
-  ];
+  const at = rest.findIndex((word) => words.includes(word));
+  const word = at < 0 ? [] : rest.splice(at, 1);
+  return [command, ...word, ...rest].map(quotedForShell).join(' ');
+}
+
+function quotedForShell(word: string): string {
+  return /^[\w./:=+,@%-]+$/.test(word) ? word : `'${word.replaceAll("'", "'\\''")}'`;
 }

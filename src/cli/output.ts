@@ -11,6 +11,9 @@ import {
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { InputError } from '../errors.js';
 
+/** Ctrl-C, a polite kill, a terminal that is closed. */
+const interrupts = ['SIGINT', 'SIGTERM', 'SIGHUP'] as const;
+
 /** A destination of text; nothing is opened before the first chunk. */
 export class Destination {
   readonly #file: string | null;
@@ -86,9 +89,12 @@ export class Destination {
     }
     this.#target = status === undefined ? this.#file : realpathSync(this.#file);
     this.#partial = `${this.#target}.${process.pid}.partial`;
-    process.once('SIGINT', this.#interrupted);
-    process.once('SIGTERM', this.#interrupted);
-    this.#descriptor = openSync(this.#partial, 'w', status?.mode ?? 0o666);
+    for (const signal of interrupts) process.once(signal, this.#interrupted);
+    try {
+      this.#descriptor = openSync(this.#partial, 'w', status?.mode ?? 0o666);
+    } catch (error) {
+      throw Object.assign(error as Error, { path: this.#file });
+    }
     return this.#descriptor;
   }
 
@@ -98,8 +104,7 @@ export class Destination {
   }
 
   #release(): void {
-    process.removeListener('SIGINT', this.#interrupted);
-    process.removeListener('SIGTERM', this.#interrupted);
+    for (const signal of interrupts) process.removeListener(signal, this.#interrupted);
   }
 }
 

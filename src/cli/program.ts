@@ -8,6 +8,7 @@ import { addDraw } from './draw.js';
 import { addFaces } from './faces.js';
 import { addFlats } from './flats.js';
 import { addMake } from './make.js';
+import { checkPlaces } from './places.js';
 import { addPolynomial } from './polynomial.js';
 import { addRegions } from './regions.js';
 import { addZonotope } from './zonotope.js';
@@ -40,7 +41,8 @@ export function buildProgram(): Command {
     .addHelpText('after', after)
     .configureHelp({ helpWidth: 80, subcommandTerm: (command) => command.name() })
     .configureOutput({ writeErr: () => {}, getOutHelpWidth: () => 80, getErrHelpWidth: () => 80 })
-    .exitOverride();
+    .exitOverride()
+    .hook('preAction', (_, command) => checkPlaces(command.opts(), command.args));
   for (const add of [
     addCensus,
     addRegions,

@@ -55,7 +55,8 @@ describe('bad input', () => {
 describe('bad usage', () => {
   const cases: [string, RegExp][] = [
     ['bogus', /unknown command 'bogus'; see: signwright --help/],
-    ['censu four.txt', /did you mean census\?/],
+    ['help bogus', /unknown command 'bogus'/],
+    ['censu four.txt', /did you mean census\? See: signwright --help$/],
     ['census', /missing required argument/],
     ['census four.txt four.txt', /too many arguments/],
     ['census four.txt --jsn', /unknown option '--jsn'; did you mean --json\?/],
@@ -66,7 +67,12 @@ describe('bad usage', () => {
     ['census four.txt --budget -1', /--budget/],
     ['regions four.txt -o regions.xyz', /add --format/],
     ['regions four.txt -o folder', /folder/],
-    ['regions four.txt -o folder/missing/r.csv', /folder\/missing/],
+    ['regions four.txt -o folder/missing/r.csv', /r\.csv: there is no folder folder\/missing;/],
+    ['regions four.txt -o zero.txt/r.csv', /zero\.txt\/r\.csv: a part of the path is not a folder/],
+    ['census four.txt --record folder/missing/r.json', /there is no folder folder\/missing;/],
+    ['faces four.txt --edges folder/', /--edges folder\/: is a folder/],
+    ['census four.txt --json -o ./four.txt', /--out \.\/four\.txt: four\.txt is read too/],
+    ['census four.txt --record r.json -o ./r.json', /--out is written to it too/],
     ['faces four.txt --dimension 4', /dimensions 0 to 3/],
     ['faces four.txt --dimension 1 --graph', /--dimension does not go with a graph/],
     ['faces four.txt --graph --format csv', /--edges FILE/],
@@ -80,6 +86,9 @@ describe('bad usage', () => {
     ['draw hasse four.txt --above=+0', /2 signs for 4 normals/],
     ['draw hasse four.txt --above=++++ --below=----', /give one of them/],
     ['draw sphere four.txt', /this version has no such picture/],
+    ['draw hasse', /missing required argument .* draw hasse --help/],
+    ['draw -o a.svg hasse four.txt', /before -o; write: signwright draw hasse -o a\.svg four\.txt/],
+    ['-o r.csv regions four.txt', /before -o; write: signwright regions -o r\.csv four\.txt/],
     ['draw four.txt hasse', /write: signwright draw hasse four\.txt/],
     ['four.txt draw hasse', /write: signwright draw hasse four\.txt/],
     ['four.txt census', /write: signwright census four\.txt/],
@@ -90,6 +99,8 @@ describe('bad usage', () => {
     ['make graph', /--complete N/],
     ['make graph --complete 4 --cycle 4', /more than one graph/],
     ['make graph --grid 3by4', /3x4/],
+    ['make graph --complete 1', /--complete 1: too small; give 2 or more/],
+    ['make graph --complete 99999999999999999999', /too large/],
     ['make generic --rank 3', /--normals/],
     ['make random --rank 2 --normals 3 --bound x', /not an integer/],
     ['symmetry four.txt', /this version has no such command/],
@@ -100,6 +111,13 @@ describe('bad usage', () => {
       expect(said).toMatch(pattern);
       expect(status).toBe(2);
     });
+  }
+});
+
+it('shows no control character of a name or an argument', () => {
+  for (const name of ['a\u001b[31mb', 'a\nb', 'a\u202eb']) {
+    expect(failure(['census', name]).line).toMatch(/^signwright: a\ufffd(\[31m)?b: no such file;/);
+    expect(failure(['census', `--${name}`]).line).not.toMatch(/[\p{Cc}\u202e]/u);
   }
 });
 

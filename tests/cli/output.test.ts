@@ -35,7 +35,7 @@ describe('a closed pipe', () => {
 });
 
 describe('an interrupted command', () => {
-  for (const signal of ['SIGINT', 'SIGTERM'] as const) {
+  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) {
     it(`leaves no file: ${signal}`, async () => {
       const child = place.start(['faces', 'six.txt', '-o', 'stopped.csv']);
       const ended = new Promise<number | null>((resolve) => child.on('exit', resolve));
