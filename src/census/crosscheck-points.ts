@@ -11,6 +11,9 @@ import {
 } from '../exact/number.js';
 import { quadraticRing } from '../exact/quadratic.js';
 
+/** Denominators above it are of decimals that a computer has rounded, or as good as. */
+const manyDecimals = 10n ** 12n;
+
 /** One text for each number: equal exactly when the numbers (in lowest terms) are. */
 function numberKey({ a, b, d }: ExactNumber): string {
   return b === 0n ? (d === 1n ? a.toString() : `${a}/${d}`) : `${a},${b}/${d}`;
@@ -48,6 +51,8 @@ export class PointSet {
   radicand: bigint | null = null;
   /** Rows read, repeated ones too. */
   rows = 0;
+  /** A coordinate has more decimals than people write, as rounded numbers do. */
+  seemsRounded = false;
   /** Each distinct point's key and the line it was first on. */
   readonly first = new Map<string, number>();
   /** Each point that came again: its key and all further lines. */
@@ -74,6 +79,7 @@ export class PointSet {
     }
     this.first.set(key, line);
     point.forEach((x, j) => {
+      if (x.d > manyDecimals) this.seemsRounded = true;
       if (this.first.size === 1 || this.isLess(x, this.low[j])) this.low[j] = x;
       if (this.first.size === 1 || this.isLess(this.high[j], x)) this.high[j] = x;
       const sum = this.sum[j];

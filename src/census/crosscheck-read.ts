@@ -4,6 +4,7 @@ import type { Arrangement } from '../arrangement/arrangement.js';
 import { setBit, WordTable, wordsFor } from '../bits/signs.js';
 import { InputError } from '../errors.js';
 import type { ExactNumber } from '../exact/number.js';
+import { count } from '../input/list-builder.js';
 import { isNumber } from '../input/number-text.js';
 import { quoted, SourceText, shownName } from '../input/source.js';
 import { PointSet } from './crosscheck-points.js';
@@ -44,7 +45,11 @@ export async function readTheirList(
   if (!bytes.some((byte) => byte > 32)) {
     throw new InputError('the list is empty', 'give a vertex or a sign vector a line', { file });
   }
-  const reader = new ListReader(new TableText(new SourceText(bytes, name)), arrangement);
+  const source = new SourceText(bytes, name);
+  if (/^\s*(\{|\[\s*[[{])/.test(source.text)) {
+    throw new InputError('this is JSON', 'give the list as CSV', { file });
+  }
+  const reader = new ListReader(new TableText(source), arrangement);
   await reader.read();
   return { name: file, vertices: reader.vertices, signs: reader.signs };
 }
@@ -120,7 +125,7 @@ class ListReader {
       throw this.source.fault(
         first.line,
         0,
-        `${columns} numbers a row, the arrangement has ${dimension} coordinates`,
+        `${count(columns, 'number')} a row, the arrangement has ${count(dimension, 'coordinate')}`,
         `name the ${dimension} columns of the vertex vertex_1, vertex_2, ... in a header`,
       );
     }

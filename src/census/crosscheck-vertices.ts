@@ -73,6 +73,11 @@ export function crosscheckVertices(
     repeated.push({ lines: [theirs.first.get(key)!, ...lines], text });
   }
   const regions = 2 * table.half.rows;
+  const agrees = matched === regions && strange.size === 0 && repeats === 0;
+  const rounded =
+    theirs.seemsRounded && !agrees
+      ? '; some numbers seem rounded, and all are taken exactly as written'
+      : '';
   return {
     kind: 'vertices',
     ours: regions,
@@ -80,7 +85,7 @@ export function crosscheckVertices(
     placement:
       matched === 0
         ? 'none: no scale and shift takes a vertex of ours to one of theirs; numbers are taken exactly as written, so rounded ones match nothing'
-        : describePlacement(arrangement, placement),
+        : `${describePlacement(arrangement, placement)}${rounded}`,
     counts: {
       matched,
       missing: regions - matched,
@@ -93,6 +98,6 @@ export function crosscheckVertices(
     extra,
     notExtreme,
     repeated,
-    agrees: matched === regions && strange.size === 0 && repeats === 0,
+    agrees,
   };
 }

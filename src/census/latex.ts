@@ -20,7 +20,7 @@ const special: Record<string, string> = {
   '<': '\\textless{}',
   '>': '\\textgreater{}',
   '|': '\\textbar{}',
-  '"': '\\textquotedbl{}',
+  '"': '\\symbol{34}',
 };
 
 /** Text of the input with everything TeX could read as a command escaped. */

@@ -160,7 +160,7 @@ function checks({ checks: all }: CensusRecord): string[] {
   const agreeing = all.filter((check) => check.agrees).length;
   const lines = [
     agreeing === all.length
-      ? `Checks: all ${all.length} agree`
+      ? `Checks: ${all.length === 1 ? 'the only one agrees' : `all ${all.length} agree`}`
       : `Checks: ${all.length - agreeing} of ${all.length} DISAGREE`,
   ];
   for (const { claim, routes, agrees } of all) {

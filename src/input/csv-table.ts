@@ -1,6 +1,7 @@
 // A CSV file by RFC 4180 as a header and rows of cells, each with its line and column for messages.
 import { InputError, type Position } from '../errors.js';
 import { cleanName, count } from './list-builder.js';
+import { isNumber } from './number-text.js';
 import { quoted, type SourceText } from './source.js';
 
 /** Every row has as many cells as the header, names of columns are distinct and not empty. */
@@ -27,6 +28,7 @@ export async function readTable(source: SourceText): Promise<CsvTable> {
   }
   const place = (row: number, column: number, offset = 0) =>
     source.place(fieldStart(source.text, row + 1, column) + offset);
+  refuseOtherSeparators(records, source);
   const header = readHeader(records[0]!, (column) => place(-1, column));
   const rows = records.slice(1);
   rows.forEach((row, index) => {
@@ -38,6 +40,15 @@ export async function readTable(source: SourceText): Promise<CsvTable> {
   return { header, rows, place };
 }
 
+function refuseOtherSeparators([header, first]: readonly string[][], source: SourceText): void {
+  if (header!.length !== 1) return;
+  const numbers = first?.length === 1 ? first[0]!.trim().split(/\s+/) : [];
+  if (/[;\t]/.test(header![0]!.trim()) || (numbers.length > 1 && numbers.every(isNumber))) {
+    const what = 'the cells are not separated by commas';
+    throw source.fault(fieldStart(source.text, 0, 0), what, 'save the file with commas');
+  }
+}
+
 function readHeader(cells: readonly string[], place: (column: number) => Position): string[] {
   const seen = new Map<string, number>();
   return cells.map((cell, column) => {
@@ -47,13 +58,6 @@ function readHeader(cells: readonly string[], place: (column: number) => Positio
         `column ${column + 1} has no name`,
         'name it in the first line',
         place(column),
-      );
-    }
-    if (cells.length === 1 && /[;\t]/.test(name)) {
-      throw new InputError(
-        'the cells are not separated by commas',
-        'save the file with commas',
-        place(0),
       );
     }
     const earlier = seen.get(name);

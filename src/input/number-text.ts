@@ -227,7 +227,10 @@ class NumberParser {
     const text = this.#text;
     const next = this.#peek();
     const what = `cannot read ${quoted(text)} as a number`;
-    if (next === '') return new NumberFault(`${what}: it stops short`, howToWrite, this.#at);
+    if (next === '') {
+      const remedy = `${howToWrite}, in a text file without blanks`;
+      return new NumberFault(`${what}: it stops short`, remedy, this.#at);
+    }
     if (/^\s*[+-]?\d+,\d+\s*$/.test(text)) {
       return new NumberFault(what, 'write decimals with a point: 0.5', this.#at);
     }

@@ -24,6 +24,10 @@ export async function readCsv(source: SourceText): Promise<GeneratorList> {
     const remedy = 'add a column for each coordinate of the normals';
     throw new InputError('no column is a coordinate', remedy, table.place(-1, 0));
   }
+  if (table.rows.length === 0) {
+    const remedy = 'give a row for each below the names of the columns';
+    throw new InputError('there is no normal', remedy, { file: source.name });
+  }
   const builder = new ListBuilder();
   table.rows.forEach((cells, row) => {
     const placeOf =

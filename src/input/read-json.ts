@@ -102,7 +102,10 @@ function syntaxFault(error: unknown, source: SourceText): InputError {
   const what = match?.[1] ?? error.message;
   const offset = Number(match?.[2] ?? 0);
   const shown = what.length > 100 ? `${what.slice(0, 97)}...` : what;
-  const message = `not sound JSON: ${shown.charAt(0).toLowerCase()}${shown.slice(1)}`;
+  const lowered = /^[A-Z][a-z ]/.test(shown)
+    ? shown.charAt(0).toLowerCase() + shown.slice(1)
+    : shown;
+  const message = `not sound JSON: ${lowered}`;
   return source.fault(offset, message.replace(/\p{Cc}/gu, ' '), 'mend the JSON here');
 }
 
@@ -121,8 +124,8 @@ function expectation(path: JsonPath): string {
   if (key === 'normals') {
     if (typeof j === 'number') return entry;
     return typeof i === 'number'
-      ? 'write an array of numbers'
-      : 'write an array of arrays of numbers';
+      ? 'write an array of numbers, at least one'
+      : 'write an array of arrays of numbers, at least one';
   }
   if (key === 'ranges') {
     if (typeof j === 'number') return entry;

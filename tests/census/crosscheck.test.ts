@@ -147,6 +147,16 @@ describe('a list of vertices', () => {
     expect(part.repeated).toEqual([{ lines: [first, 32], text: twice.join(', ') }]);
   });
 
+  it('is told that numbers seem rounded where that may be why they differ', async () => {
+    const third = (v: readonly number[]) => v.map((x) => String(x / 3));
+    const { parts } = await check(cubeArrangement, csv(cubeVertices.map(third)));
+    expect((parts[0] as ListReport).placement).toMatch(/seem rounded|rounded ones match nothing/);
+    const exact = await check(cubeArrangement, csv(cubeVertices.map((v) => v.map((x) => x / 4))));
+    expect((exact.parts[0] as ListReport).placement).not.toContain('rounded');
+    const fewer = await check(cubeArrangement, csv(cubeVertices.slice(1)));
+    expect((fewer.parts[0] as ListReport).placement).not.toContain('rounded');
+  });
+
   it('finds its place even when its outermost points are missing and others are outside', async () => {
     const rows = [
       [3, 1, 0],
@@ -332,6 +342,9 @@ describe('faults of a list', () => {
     ['a number that is none', '1,2,3\n1,2,x\n', /^theirs\.csv:2:5: cannot read "x" as a number/],
     ['a ragged row', '1,2,3\n1,2\n', /^theirs\.csv:2:1: 2 cells, the first row has 3/],
     ['a wrong width', '1,2\n3,4\n', /^theirs\.csv:1:1: 2 numbers a row, the arrangement has 3/],
+    ['a single number', '1\n3\n', /1 number a row, the arrangement has 3 coordinates/],
+    ['JSON', '{"signs":"+++++++"}\n', /^theirs\.csv: this is JSON; give the list as CSV/],
+    ['JSON of rows', '[[1,2,3]]', /^theirs\.csv: this is JSON; give the list as CSV/],
     ['short signs', '+++++++\n+++\n', /^theirs\.csv:2:1: 3 signs, the arrangement has 7 normals/],
     [
       'a zero among signs',

@@ -151,6 +151,7 @@ describe('LaTeX', () => {
 
   it('escapes all ten special characters of TeX', () => {
     // D. Knuth, 1984, The TeXbook, chapter 7: \ { } $ & # ^ _ % ~ have meanings of their own.
+    expect(escapeLatex('"')).toBe('\\symbol{34}');
     expect(escapeLatex('\\{}$&#^_%~')).toBe(
       '\\textbackslash{}\\{\\}\\$\\&\\#\\textasciicircum{}\\_\\%\\textasciitilde{}',
     );

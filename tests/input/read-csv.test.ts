@@ -79,6 +79,9 @@ describe('CSV', () => {
     ['1,2\n3,4', '1:1 the first line holds numbers, not names of columns'],
     ['Label,x\na,1', '1:1 the column "Label" may be label or a coordinate'],
     ['x;y\n1;2', '1:1 the cells are not separated by commas'],
+    ['x\ty\n1\t2', '1:1 the cells are not separated by commas'],
+    ['x y\n1 2', '1:1 the cells are not separated by commas'],
+    ['\nx\n1 2 3', '2:1 the cells are not separated by commas'],
     ['label,low\na,0', '1:1 no column is a coordinate'],
     ['x,y\n', '-:- there is no normal'],
   ])('%j', async (text, expected) => {

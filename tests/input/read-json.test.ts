@@ -74,6 +74,7 @@ describe('JSON', () => {
     ],
     ['{"normals": [[1, 2]], "coordinates": ["x", "x"]}', '1:44 the coordinate "x" is named twice'],
     ['{"normals": [[1, 2]], "coordinates": ["x", " "]}', '1:44 a coordinate has no name'],
+    ['# x', "1:1 not sound JSON: JSON value expected but got '#'"],
     ['{"normals": [[1],}', "1:18 not sound JSON: array item expected but got '}'"],
     [
       '{"normals": [[1]]',
