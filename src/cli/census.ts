@@ -40,7 +40,6 @@ Examples:
 export function addCensus(program: Command): void {
   const command = program
     .command('census')
-    .summary('every count, each by independent routes')
     .description('Count everything, each count by independent routes, side by side.')
     .argument('<arrangement>', 'a file of normals, or - for standard input');
   addCommonOptions(command, formats)

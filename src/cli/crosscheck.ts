@@ -47,7 +47,6 @@ Examples:
 export function addCrosscheck(program: Command): void {
   const command = program
     .command('crosscheck')
-    .summary("somebody else's list, or number of regions, held against ours")
     .description("Hold somebody else's list, or just a number of regions, against ours.")
     .argument('<arrangement>', 'a file of normals, or - for standard input')
     .argument('[file]', 'a list of zonotope vertices or of sign vectors');

@@ -42,7 +42,6 @@ Examples:
 export function addDraw(program: Command): void {
   const draw = program
     .command('draw')
-    .summary('a picture as SVG: hasse, zonotope, tiling')
     .description('Draw a picture as SVG.')
     .usage('PICTURE ARRANGEMENT [options]')
     .helpCommand(false)

@@ -31,7 +31,6 @@ Examples:
 export function addFaces(program: Command): void {
   const command = program
     .command('faces')
-    .summary('every face with its dimension; the face poset as a graph')
     .description('List every face of the arrangement, or write the face poset as a graph.')
     .argument('<arrangement>', 'a file of normals, or - for standard input');
   addCommonOptions(command, [...listFormats, 'graphml', 'gexf']).option(

@@ -22,7 +22,6 @@ Examples:
 export function addFlats(program: Command): void {
   const command = program
     .command('flats')
-    .summary('the intersection lattice: rank and Moebius value of each flat')
     .description('List the flats with rank and Moebius value, or write their lattice as a graph.')
     .argument('<arrangement>', 'a file of normals, or - for standard input');
   addCommonOptions(command, [...listFormats, 'graphml', 'gexf']);

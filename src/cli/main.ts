@@ -2,19 +2,18 @@
 import type { Command } from 'commander';
 import { type Ending, endingOf } from './exit.js';
 import { checkOrder } from './order.js';
-import { buildProgram } from './program.js';
+import { buildProgram, commandNames } from './program.js';
 
 /** Runs one command; never rejects. */
 export async function main(words: readonly string[]): Promise<void> {
-  const program = buildProgram();
-  const commands = program.commands.map((command) => command.name());
-  const args = words[0] === 'help' ? helpFor(words.slice(1), commands) : words;
+  const args = words[0] === 'help' ? helpFor(words.slice(1)) : words;
+  const program = await buildProgram(args.find((arg) => commandNames.includes(arg)));
   const command = commandPath(program, args);
   const finish = (error: unknown): void => end(endingOf(error, command), error);
   process.stderr.on('error', () => {});
   process.stdout.on('error', finish);
   try {
-    checkOrder(args, commands);
+    checkOrder(args, commandNames);
     if (args.length === 0) program.outputHelp();
     else await program.parseAsync([...args], { from: 'user' });
   } catch (error) {
@@ -23,9 +22,9 @@ export async function main(words: readonly string[]): Promise<void> {
 }
 
 /** `help make` is `make --help`; of what is no command there is none. */
-function helpFor(words: readonly string[], commands: readonly string[]): readonly string[] {
+function helpFor(words: readonly string[]): readonly string[] {
   const [first] = words;
-  return first === undefined || commands.includes(first) ? [...words, '--help'] : [first];
+  return first === undefined || commandNames.includes(first) ? [...words, '--help'] : [first];
 }
 
 /** `census`, `draw hasse`: the words that name what was started; '' where they name nothing. */

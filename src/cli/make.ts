@@ -54,7 +54,6 @@ Examples:
 export function addMake(program: Command): void {
   const make = program
     .command('make')
-    .summary('the normals of a standard family')
     .description('Write the normals of a standard family.')
     .usage('FAMILY [parameters] [options]')
     .helpCommand(false)

@@ -28,7 +28,6 @@ Examples:
 export function addPolynomial(program: Command): void {
   const command = program
     .command('polynomial')
-    .summary('the characteristic polynomial, without listing regions')
     .description('The characteristic polynomial alone, never by listing regions.')
     .argument('<arrangement>', 'a file of normals, or - for standard input');
   addCommonOptions(command, formats)

@@ -26,7 +26,6 @@ Examples:
 export function addRegions(program: Command): void {
   const command = program
     .command('regions')
-    .summary('the list of regions: signs, walls, point, zonotope vertex')
     .description('List every region: signs, walls, an interior point, the zonotope vertex.')
     .argument('<arrangement>', 'a file of normals, or - for standard input');
   addCommonOptions(command, formats)
