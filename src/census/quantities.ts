@@ -8,11 +8,14 @@ function twoDigits(value: number): string {
     : String(Number(value.toPrecision(2)));
 }
 
+/** No estimate is better than to a thousandth of a second. */
+const leastSeconds = 0.001;
+
 /** Seconds as people say them: `0.4 s`, `12 min`, `3.5 h`, `40 days`, `1,200 years`. */
 export function formatSeconds(seconds: number): string {
   const day = 86400;
   if (!Number.isFinite(seconds) || seconds > 1e6 * 365 * day) return 'more than a million years';
-  if (seconds < 100) return `${twoDigits(seconds)} s`;
+  if (seconds < 100) return `${twoDigits(Math.max(seconds, leastSeconds))} s`;
   if (seconds < 100 * 60) return `${twoDigits(seconds / 60)} min`;
   if (seconds < 3 * day) return `${twoDigits(seconds / 3600)} h`;
   if (seconds < 800 * day) return `${twoDigits(seconds / day)} days`;

@@ -10,6 +10,7 @@ import {
 } from 'node:fs';
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { InputError } from '../errors.js';
+import { giveWayToResult } from './progress.js';
 
 /** Ctrl-C, a polite kill, a terminal that is closed. */
 const interrupts = ['SIGINT', 'SIGTERM', 'SIGHUP'] as const;
@@ -76,6 +77,7 @@ export class Destination {
   #open(): number {
     if (this.#descriptor !== null) return this.#descriptor;
     if (this.#file === null) {
+      if (process.stdout.isTTY) giveWayToResult();
       this.#descriptor = 1;
       return 1;
     }

@@ -3,7 +3,7 @@ import type { SingleBar } from 'cli-progress';
 
 /** Shows what is being done; silent unless standard error is a terminal and --quiet is not given. */
 export class Progress {
-  readonly #makeBar: (() => SingleBar) | null;
+  #makeBar: (() => SingleBar) | null;
   #bar: SingleBar | null = null;
   #stage = '';
   #lineShown = false;
@@ -53,17 +53,26 @@ export class Progress {
     this.#clearLine();
   }
 
+  /** Ends it, and shows nothing more. */
+  silence(): void {
+    this.end();
+    this.#makeBar = null;
+  }
+
   #clearLine(): void {
     if (this.#lineShown) process.stderr.write('\r\u001b[K');
     this.#lineShown = false;
   }
 }
 
+/** The progress on the terminal now. */
+let shown: Progress | null = null;
+
 /** The progress of a command; the package that draws bars is loaded only when one can be seen. */
 export async function startProgress(quiet: boolean | undefined): Promise<Progress> {
   if (quiet === true || process.stderr.isTTY !== true) return new Progress(null);
   const { default: bars } = await import('cli-progress');
-  return new Progress(
+  shown = new Progress(
     () =>
       new bars.SingleBar({
         format: '{stage} [{bar}] {percentage}%',
@@ -75,4 +84,11 @@ export async function startProgress(quiet: boolean | undefined): Promise<Progres
         stream: process.stderr,
       }),
   );
+  return shown;
+}
+
+/** Clears the progress for good: the result comes to the same terminal. */
+export function giveWayToResult(): void {
+  shown?.silence();
+  shown = null;
 }

@@ -98,9 +98,11 @@ export function drawFaces(
   const counts = layerCounts(selection);
   const order = orderLayers(selection);
   const signsOf = faceSigns(arrangement, poset);
+  const crossed =
+    selection.upTargets.length < 2 ? '' : ` The lines cross ${order.crossings} times.`;
   const sheet = startSheet(paper, {
     ...words,
-    description: `${words.description} The lines cross ${order.crossings} times.`,
+    description: words.description + crossed,
   });
   const roles = new Set<FaceRole>(counts.map((_, i) => faceRole(lowest + i, rank)));
   drawFrame(sheet.svg, paper, words, roles);

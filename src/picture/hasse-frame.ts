@@ -25,7 +25,8 @@ const roleNames: Readonly<Record<FaceRole, string>> = {
 const margin = 30;
 const sideWidth = 108;
 
-function counted(count: number, one: string, many: string): string {
+/** `1 face`, `3 faces`. */
+export function counted(count: number, one: string, many: string): string {
   return `${count} ${count === 1 ? one : many}`;
 }
 

@@ -5,7 +5,7 @@ import { titleOf } from '../export/heading.js';
 import type { FacePoset } from '../face/poset.js';
 import { drawFaces, layerCounts, layOutFaces } from './hasse-faces.js';
 import type { FrameWords } from './hasse-frame.js';
-import { nameFaces } from './hasse-frame.js';
+import { counted, nameFaces } from './hasse-frame.js';
 import { drawSummary } from './hasse-summary.js';
 import type { FaceSelection, HassePart } from './selection.js';
 import { selectFaces } from './selection.js';
@@ -46,7 +46,12 @@ export function drawHasse(
   const normals = arrangement.generators.normals.length;
   const title = `${options.title ?? titleOf(arrangement)}: faces`;
   const idPrefix = (options.idPrefix ?? 'hasse').replace(/[^A-Za-z0-9_-]/g, '-');
-  const size = `${selection.faces.length} faces, ${selection.upTargets.length} covers, rank ${poset.rank}, ${poset.hyperplanes} hyperplanes`;
+  const size = [
+    counted(selection.faces.length, 'face', 'faces'),
+    counted(selection.upTargets.length, 'cover', 'covers'),
+    `rank ${poset.rank}`,
+    counted(poset.hyperplanes, 'hyperplane', 'hyperplanes'),
+  ].join(', ');
   const base = { title, subtitle: `Hasse diagram of ${partWords(part)}: ${size}` };
   const description = describe(poset, selection, part);
   const readable =
@@ -96,9 +101,14 @@ function describe(poset: FacePoset, selection: FaceSelection, part: HassePart): 
     const k = selection.lowest + i;
     return `dimension ${k}, ${nameFaces(count, k, poset.rank)}`;
   });
+  const lines = selection.upTargets.length;
+  const joined =
+    lines === 1
+      ? ' 1 line joins a face to one a dimension higher that it bounds.'
+      : ` ${lines} lines join each face to those one dimension higher that it bounds.`;
   return (
     `Hasse diagram of ${partWords(part)} of a central hyperplane arrangement of rank ${poset.rank} ` +
-    `with ${poset.hyperplanes} hyperplanes. Layers from the bottom up: ${layers.join('; ')}. ` +
-    `${selection.upTargets.length} lines join each face to those one dimension higher that it bounds.`
+    `with ${counted(poset.hyperplanes, 'hyperplane', 'hyperplanes')}. ` +
+    `Layers from the bottom up: ${layers.join('; ')}.${lines === 0 ? '' : joined}`
   );
 }

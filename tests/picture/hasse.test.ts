@@ -239,6 +239,18 @@ describe('words', () => {
     }
   });
 
+  it('say one face and one line as one', () => {
+    const point = arrangementOf([[2]]);
+    const drawn = (part: HasseOptions['part']) =>
+      parse(drawHasse(point, slowPoset(point), { part }));
+    const one = drawn({ kind: 'above', signs: '+' });
+    expect(words(one.desc)).toMatch(/with 1 hyperplane\. .*: dimension 1, 1 region\.$/);
+    expect(words(one.text[1])).toMatch(/: 1 face, 0 covers, rank 1, 1 hyperplane$/);
+    const two = drawn({ kind: 'below', signs: '+' });
+    expect(words(two.desc)).toMatch(/1 line joins a face to one a dimension higher/);
+    expect(words(two.text[1])).toMatch(/: 2 faces, 1 cover, /);
+  });
+
   it('at the side count the faces of each layer, and of the zonotope', () => {
     const texts = group(parse(drawHasse(arrangement, poset)), 'layers').text.map(words);
     expect(texts).toEqual([
