@@ -19,19 +19,6 @@ const ROUNDED_FACTOR = 2 ** 49;
 const TIE_FREE_LIMIT = 2 ** 26;
 const RUN = 12;
 
-/** The line walked along: coordinate p is eliminated by class c, coordinate q runs along it. */
-interface Line {
-  readonly c: number;
-  readonly p: number;
-  readonly q: number;
-  /** 0 where products are exact as they are, else what divides them. */
-  readonly divisor: number;
-  /** |a_p|, and a_0 and a_q with the sign of a_p. */
-  readonly pivot: number;
-  readonly own0: number;
-  readonly ownq: number;
-}
-
 /** The crossings along one line; n classes at most, scratch reused between calls. */
 export class Crossings {
   readonly ring: Ring<unknown>;
@@ -49,6 +36,11 @@ export class Crossings {
   readonly firstWaiting: Int32Array;
   readonly nextWaiting: Int32Array;
   readonly #approximate: Float64Array;
+  /**
+   * The line walked along: |a_p|, then a_0 and a_q with the sign of a_p, then what divides products
+   * (0 where they are exact as they are). A typed array, so that no number is boxed on the way.
+   */
+  readonly #line = new Float64Array(4);
   #spareOrder: Int32Array;
   #sparePosition: Float64Array;
 
@@ -72,13 +64,13 @@ export class Crossings {
       const p = entries[3 * c + 2] === 0 ? 1 : 2;
       const q = 3 - p;
       const flip = entries[3 * c + p] < 0 ? -1 : 1;
-      const pivot = flip * entries[3 * c + p];
-      const own0 = flip * entries[3 * c];
-      const ownq = flip * entries[3 * c + q];
-      const divisor = B <= DIRECT_LIMIT ? 0 : level.pivot;
-      const line = { c, p, q, divisor, pivot, own0, ownq };
-      this.#take(level, active, line);
-      if ((divisor === 0 && 2 * B * B <= TIE_FREE_LIMIT) || this.#nothingHides(level, line)) return;
+      const line = this.#line;
+      line[0] = flip * entries[3 * c + p];
+      line[1] = flip * entries[3 * c];
+      line[2] = flip * entries[3 * c + q];
+      line[3] = B <= DIRECT_LIMIT ? 0 : level.pivot;
+      this.#take(level, active, c, p, q);
+      if ((line[3] === 0 && 2 * B * B <= TIE_FREE_LIMIT) || this.#nothingHides(level, p, q)) return;
     }
     const { ring } = this;
     const rows = level.elementRows(ring);
@@ -100,9 +92,9 @@ export class Crossings {
   /** The points of a level 2, class 0 (at infinity) left out; classes 1 to active - 1 are active. */
   alongItself(level: FlatLevel, active: number): void {
     if (level.plain) {
-      const line = { c: 0, p: 0, q: 1, divisor: 0, pivot: 1, own0: 0, ownq: 0 };
-      this.#take(level, active, line);
-      if (this.#nothingHides(level, line)) return;
+      this.#line.set([1, 0, 0, 0]);
+      this.#take(level, active, 0, 0, 1);
+      if (this.#nothingHides(level, 0, 1)) return;
     }
     const rows = level.elementRows(this.ring);
     this.#overRing(
@@ -115,12 +107,15 @@ export class Crossings {
 
   /**
    * Values x + y s of all classes but 0 and c, coordinate p eliminated by class c (which changes
-   * nothing where c = 0), s being coordinate q. `divisor` is 0 where products are exact as they are,
-   * else the pivot that divides them.
+   * nothing where c = 0), s being coordinate q.
    */
-  #take(level: FlatLevel, active: number, line: Line): void {
+  #take(level: FlatLevel, active: number, c: number, p: number, q: number): void {
     const { entries, classes, dimension } = level;
-    const { c, p, q, divisor, pivot, own0, ownq } = line;
+    const line = this.#line;
+    const pivot = line[0];
+    const own0 = line[1];
+    const ownq = line[2];
+    const divisor = line[3];
     const { startsPositive, position, order } = this;
     let count = 0;
     for (let k = 1; k < active; k++) {
@@ -144,13 +139,17 @@ export class Crossings {
     this.count = count;
     this.#sort();
     this.firstWaiting.fill(-1, 0, count);
-    if (active < classes) this.#wait(level, active, line);
+    if (active < classes) this.#wait(level, active, p, q);
   }
 
   /** The inactive classes: each waits for the first crossing not before its own. */
-  #wait(level: FlatLevel, active: number, line: Line): void {
+  #wait(level: FlatLevel, active: number, p: number, q: number): void {
     const { entries, classes, dimension } = level;
-    const { p, q, divisor, pivot, own0, ownq } = line;
+    const line = this.#line;
+    const pivot = line[0];
+    const own0 = line[1];
+    const ownq = line[2];
+    const divisor = line[3];
     const { startsPositive, position, firstWaiting, nextWaiting, count } = this;
     for (let k = active; k < classes; k++) {
       const offset = dimension * k;
@@ -243,10 +242,14 @@ export class Crossings {
    * double may then lie just before or after, but still before the next crossing: either way its sign
    * is that of a point of the line there.
    */
-  #nothingHides(level: FlatLevel, line: Line): boolean {
+  #nothingHides(level: FlatLevel, p: number, q: number): boolean {
     const { position, order, count } = this;
     const { entries, dimension } = level;
-    const { p, q, divisor, pivot, own0, ownq } = line;
+    const line = this.#line;
+    const pivot = line[0];
+    const own0 = line[1];
+    const ownq = line[2];
+    const divisor = line[3];
     const value = (k: number, j: number, own: number): number => {
       const x = pivot * entries[dimension * k + j] - entries[dimension * k + p] * own;
       return divisor === 0 ? x : Math.round(x / divisor);

@@ -85,7 +85,7 @@ export class RegionEnumerator {
       const from = splits.rows;
       this.restrict(e, c);
       this.regions(e - 1, level.least[c]);
-      tree.insert(splits, from, splits.rows, c, level.least[c]);
+      tree.insert(splits, from, splits.rows, level, c);
     }
     tree.leaves(splits, level, sorted, out);
   }

@@ -2,7 +2,7 @@
 // the splits made so far and whose leaves are the regions. A split is a region of the restriction to
 // the class inserted; its sign word, read at the classes of the nodes, leads from the root to the
 // leaf it splits. Along any path the classes ascend.
-import { grownRows, type WordTable } from '../bits/signs.js';
+import { bitAt, grownRows, type WordTable } from '../bits/signs.js';
 import { LimitError } from '../errors.js';
 import type { FlatLevel } from './level.js';
 
@@ -10,7 +10,10 @@ const STRIDE = 4;
 /** Most splits: twice their number, which names the leaves, fits 32 bits. */
 const MOST_SPLITS = 2 ** 30;
 
-/** Node v is row v of the splits' word table; its two children, its hyperplane, its class. */
+/**
+ * Node v is row v of the splits' word table: its two children, its hyperplane, and 2 c + 1 or 2 c for
+ * its class c, whose normal has that hyperplane on its positive or its negative side.
+ */
 export class SplitTree {
   #nodes = new Int32Array(STRIDE * 256);
   #root = -1;
@@ -30,12 +33,14 @@ export class SplitTree {
   }
 
   /**
-   * Adds rows [from, to) of `splits`, all of class c with least hyperplane h. Rows that come sorted
+   * Adds rows [from, to) of `splits`, all of class c of the level. Rows that come sorted
    * share their path with the row before up to the first hyperplane where they differ: the walk
    * starts there, not at the root.
    */
-  insert(splits: WordTable, from: number, to: number, c: number, h: number): void {
+  insert(splits: WordTable, from: number, to: number, level: FlatLevel, c: number): void {
     const W = this.#wordsPerRow;
+    const h = level.least[c];
+    const oriented = 2 * c + bitAt(level.along, c * W, h);
     const words = splits.words;
     if (to > MOST_SPLITS) {
       throw new LimitError(
@@ -54,7 +59,7 @@ export class SplitTree {
       nodes[v * STRIDE] = -1;
       nodes[v * STRIDE + 1] = -1;
       nodes[v * STRIDE + 2] = h;
-      nodes[v * STRIDE + 3] = c;
+      nodes[v * STRIDE + 3] = oriented;
       this.#root = v++;
     }
     for (; v < to; v++) {
@@ -63,7 +68,7 @@ export class SplitTree {
       nodes[own] = -1;
       nodes[own + 1] = -1;
       nodes[own + 2] = h;
-      nodes[own + 3] = c;
+      nodes[own + 3] = oriented;
       let node = this.#root;
       if (depth > 0) {
         const first = W === 2 ? firstDifferenceOfTwo(words, row) : firstDifference(words, row, W);
@@ -118,10 +123,10 @@ export class SplitTree {
     for (let i = 0; i <= count; i++) {
       const v = leaves[i] >> 1;
       const side = leaves[i] & 1;
-      const h = nodes[v * STRIDE + 2];
-      const c = nodes[v * STRIDE + 3] * W;
+      const oriented = nodes[v * STRIDE + 3];
+      const c = (oriented >> 1) * W;
       // All ones where the side is that of the class's normal, a mask instead of a branch.
-      const straight = -(1 ^ side ^ ((along[c + (h >> 5)] >>> h) & 1));
+      const straight = -(1 ^ side ^ (oriented & 1));
       const row = v * W;
       if (W === 2) {
         into[at] = from[row] | (along[c] & straight) | (against[c] & ~straight);
