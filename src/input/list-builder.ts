@@ -125,8 +125,9 @@ export class ListBuilder {
   }
 }
 
-// Control characters would reach terminals and files; a lone surrogate cannot be written as UTF-8.
-const unfitForNames = /[\p{Cc}\p{Cs}\u2028\u2029]/u;
+// Control characters would reach terminals and files, marks that override the direction of text would
+// turn what stands beside the name; a lone surrogate cannot be written as UTF-8.
+const unfitForNames = /[\p{Cc}\p{Cs}\u2028\u2029\u202a-\u202e\u2066-\u2069]/u;
 
 /** True where a trimmed text can be a label, a title or the name of a coordinate. */
 export function isName(text: string): boolean {

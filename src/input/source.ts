@@ -22,7 +22,7 @@ export function quoted(text: string): string {
   return JSON.stringify(
     characters.length > 40 ? `${characters.slice(0, 37).join('')}...` : text,
   ).replace(
-    /[\u007f-\u009f\u2028\u2029]/g,
+    /[\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069]/g,
     (c) => `\\u${c.charCodeAt(0).toString(16).padStart(4, '0')}`,
   );
 }

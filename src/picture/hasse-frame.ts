@@ -1,5 +1,6 @@
 // What every Hasse diagram has around its lines: title, names and counts of the layers at the side,
 // legend and notes below. Returns the area that is left for the diagram itself.
+import { formatCount } from '../census/quantities.js';
 import type { Area, Band } from './bands.js';
 import type { FaceRole } from './palette.js';
 import { faceRole, faceTints, rule, softInk } from './palette.js';
@@ -25,9 +26,9 @@ const roleNames: Readonly<Record<FaceRole, string>> = {
 const margin = 30;
 const sideWidth = 108;
 
-/** `1 face`, `3 faces`. */
+/** `1 face`, `1,530 faces`. */
 export function counted(count: number, one: string, many: string): string {
-  return `${count} ${count === 1 ? one : many}`;
+  return `${formatCount(count)} ${count === 1 ? one : many}`;
 }
 
 /** `36 walls`: faces of dimension k in an arrangement of rank r by their usual name. */

@@ -1,12 +1,13 @@
 // The Hasse diagram of a poset too large to read: a box for every type of face, with how many faces
 // it stands for, and on every line how many covers.
+import { formatCount } from '../census/quantities.js';
 import type { FacePoset } from '../face/poset.js';
 import type { Area, Band } from './bands.js';
 import type { FaceType, FaceTypes, Span } from './face-types.js';
 import { findFaceTypes } from './face-types.js';
 import { layerCounts } from './hasse-faces.js';
 import type { FrameWords } from './hasse-frame.js';
-import { areaWithin, drawFrame, drawLayerNames, nameFaces } from './hasse-frame.js';
+import { areaWithin, counted, drawFrame, drawLayerNames, nameFaces } from './hasse-frame.js';
 import type { LayeredGraph } from './layers.js';
 import { orderLayers } from './layers.js';
 import type { FaceRole } from './palette.js';
@@ -52,7 +53,7 @@ export function drawSummary(
     title: words.title,
     subtitle: `Summary by type. ${words.subtitle}`,
     notes: [
-      `The ${selection.faces.length} faces are summed up, not drawn one by one: a box stands for all faces of its dimension that lie in as many hyperplanes, are bounded by as many faces one dimension lower and bound as many one higher; 3–5 means from 3 to 5.`,
+      `The ${formatCount(selection.faces.length)} faces are summed up, not drawn one by one: a box stands for all faces of its dimension that lie in as many hyperplanes, are bounded by as many faces one dimension lower and bound as many one higher; 3–5 means from 3 to 5.`,
       'The number on a line says how many covers join faces of its two boxes; a thicker line has more.',
     ],
   };
@@ -84,7 +85,7 @@ export function drawSummary(
 }
 
 function spanText([least, most]: Span): string {
-  return least === most ? `${least}` : `${least}–${most}`;
+  return least === most ? formatCount(least) : `${formatCount(least)}–${formatCount(most)}`;
 }
 
 function boxOf(type: FaceType, k: number, rank: number, fontSize: number): Box {
@@ -225,8 +226,9 @@ function drawJoins(
       .attr('y2', round(to[1]))
       .attr('stroke-width', round(0.5 + 2.2 * Math.sqrt(count / most)))
       .append('title')
-      .text(`${count} covers`);
-    const [width, height] = [(textWidth(`${count}`) + 0.4) * numberFont, 1.2 * numberFont];
+      .text(counted(count, 'cover', 'covers'));
+    const number = formatCount(count);
+    const [width, height] = [(textWidth(number) + 0.4) * numberFont, 1.2 * numberFont];
     const others = lines.filter((_, j) => j !== i);
     const place = freePlace(lines[i], others, taken, width, height);
     if (place === null) return;
@@ -242,7 +244,7 @@ function drawJoins(
       .append('text')
       .attr('x', round((place.left + place.right) / 2))
       .attr('y', round((place.top + place.bottom) / 2 + 0.36 * numberFont))
-      .text(count);
+      .text(number);
   });
 }
 

@@ -1,6 +1,8 @@
 // The Hasse diagram of a face poset as an SVG page: every face while they can be read, otherwise a
 // summary by type of face that says so.
+
 import type { Arrangement } from '../arrangement/arrangement.js';
+import { formatCount } from '../census/quantities.js';
 import { titleOf } from '../export/heading.js';
 import type { FacePoset } from '../face/poset.js';
 import { drawFaces, layerCounts, layOutFaces } from './hasse-faces.js';
@@ -105,7 +107,7 @@ function describe(poset: FacePoset, selection: FaceSelection, part: HassePart): 
   const joined =
     lines === 1
       ? ' 1 line joins a face to one a dimension higher that it bounds.'
-      : ` ${lines} lines join each face to those one dimension higher that it bounds.`;
+      : ` ${formatCount(lines)} lines join each face to those one dimension higher that it bounds.`;
   return (
     `Hasse diagram of ${partWords(part)} of a central hyperplane arrangement of rank ${poset.rank} ` +
     `with ${counted(poset.hyperplanes, 'hyperplane', 'hyperplanes')}. ` +

@@ -15,7 +15,7 @@ const entry = (k: bigint | null) =>
     .map(([a, b, d]) => exactNumber(a, b, d));
 const name = fc
   .string({ unit: 'grapheme', minLength: 1, maxLength: 12 })
-  .map((text) => `~${text.replace(/[\p{Cc}\p{Cs}\u2028\u2029]/gu, '')}~`);
+  .map((text) => `~${text.replace(/[\p{Cc}\p{Cs}\u2028\u2029\u202a-\u202e\u2066-\u2069]/gu, '')}~`);
 const range = fc.tuple(integer, fc.bigInt(1n, 10n ** 20n), fc.bigInt(1n, 99n)).map(
   ([low, width, d]): Range => ({
     low: exactNumber(low, 0n, d),

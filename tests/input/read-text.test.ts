@@ -95,6 +95,7 @@ describe('text', () => {
     [' \n', '-:- the file is empty'],
     ['', '-:- the file is empty'],
     ['\u{1f6a2}: 1 q', '1:6 cannot read "q" as a number'],
+    ['a\u202eb: 1', '1:1 the name "a\\u202eb" has a line break or control character in it'],
     ['a\u0007b: 1', '1:1 the name "a\\u0007b" has a line break or control character in it'],
   ])('%j', async (text, expected) => {
     expect(await faultIn('a.txt', text)).toBe(expected);
