@@ -241,7 +241,7 @@ describe('words', () => {
 
   it('say one face and one line as one', () => {
     const point = arrangementOf([[2]]);
-    const drawn = (part: HasseOptions['part']) =>
+    const drawn = (part: NonNullable<HasseOptions['part']>) =>
       parse(drawHasse(point, slowPoset(point), { part }));
     const one = drawn({ kind: 'above', signs: '+' });
     expect(words(one.desc)).toMatch(/with 1 hyperplane\. .*: dimension 1, 1 region\.$/);
