@@ -2,6 +2,7 @@
 // method (C. Lemke, 1954) on A y >= 1 with least-index choices, which cannot cycle (R. Bland, 1977,
 // New finite pivoting rules for the simplex method), and fraction-free exchange steps, so that
 // every entry of the tableau is a minor of the data.
+import { exchangePivot } from '../exact/exchange.js';
 import type { Ring } from '../exact/ring.js';
 
 /**
@@ -11,7 +12,7 @@ import type { Ring } from '../exact/ring.js';
 export function conePoint<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): E[] | null {
   const width = rows[0].length;
   const height = rows.length;
-  const { add, subtract, multiply, negate, divideExactly, sign } = ring;
+  const { add, subtract, multiply, negate, sign } = ring;
   // Row i states slack i as a function of the coordinates: row . y - 1. The last row is the
   // objective. All entries are numerators over the positive `denominator`.
   const tableau = rows.map((row) => [...row, negate(ring.one)]);
@@ -22,28 +23,7 @@ export function conePoint<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): E[
   const free = Array.from({ length: width }, (_, j) => ~j);
 
   const exchange = (p: number, q: number): void => {
-    const pivotRow = tableau[p];
-    const pivot = pivotRow[q];
-    const flip = sign(pivot) < 0;
-    for (let i = 0; i <= height; i++) {
-      const row = tableau[i];
-      if (i === p) continue;
-      const factor = row[q];
-      for (let j = 0; j <= width; j++) {
-        if (j === q) continue;
-        const entry = divideExactly(
-          subtract(multiply(pivot, row[j]), multiply(factor, pivotRow[j])),
-          denominator,
-        );
-        row[j] = flip ? negate(entry) : entry;
-      }
-      if (flip) row[q] = negate(factor);
-    }
-    for (let j = 0; j <= width; j++) {
-      if (j === q) pivotRow[j] = flip ? negate(denominator) : denominator;
-      else if (!flip) pivotRow[j] = negate(pivotRow[j]);
-    }
-    denominator = flip ? negate(pivot) : pivot;
+    denominator = exchangePivot(ring, tableau, p, q, denominator);
     [basic[p], free[q]] = [free[q], basic[p]];
   };
 

@@ -3,6 +3,7 @@
 // steps with least-index choices, which cannot cycle (R. Bland, 1977, New finite pivoting rules for
 // the simplex method); fraction-free exchange, so that entries stay minors of the data.
 import type { Arrangement } from '../arrangement/arrangement.js';
+import { exchangePivot } from '../exact/exchange.js';
 import { gcd, integerRing } from '../exact/integers.js';
 import {
   addNumbers,
@@ -82,7 +83,7 @@ function reduced(direction: readonly Quadratic[]): ExactNumber[] {
  * target; otherwise a direction g with g . target above g . (rows t) for every such t.
  */
 function separate<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): E[] | null {
-  const { add, subtract, multiply, negate, divideExactly, sign } = ring;
+  const { add, subtract, negate, sign } = ring;
   const height = rows.length;
   const count = rows[0].length - 1;
   // Row i is the residue of row i: its target less its coefficients times t; later some t. Entries
@@ -94,27 +95,7 @@ function separate<E>(ring: Ring<E>, rows: readonly (readonly E[])[]): E[] | null
   const isUp = new Array<boolean>(count).fill(false);
 
   const exchange = (p: number, q: number): void => {
-    const pivotRow = tableau[p];
-    const pivot = pivotRow[q];
-    const flip = sign(pivot) < 0;
-    tableau.forEach((row, i) => {
-      if (i === p) return;
-      const factor = row[q];
-      for (let j = 0; j <= count; j++) {
-        if (j === q) continue;
-        const entry = divideExactly(
-          subtract(multiply(pivot, row[j]), multiply(factor, pivotRow[j])),
-          denominator,
-        );
-        row[j] = flip ? negate(entry) : entry;
-      }
-      if (flip) row[q] = negate(factor);
-    });
-    for (let j = 0; j <= count; j++) {
-      if (j === q) pivotRow[j] = flip ? negate(denominator) : denominator;
-      else if (!flip) pivotRow[j] = negate(pivotRow[j]);
-    }
-    denominator = flip ? negate(pivot) : pivot;
+    denominator = exchangePivot(ring, tableau, p, q, denominator);
     [basic[p], free[q]] = [free[q], basic[p]];
   };
   /** Coefficients of the residues in row i: with u residues, row i = constant + sum c t + g . u. */
